@@ -1,0 +1,10 @@
+export { newId } from "./columns";
+export * from "./drawings";
+export * from "./floor";
+export * from "./money";
+export * from "./orders";
+export * from "./people";
+export * from "./shipping";
+export * from "./shop";
+export * from "./thread";
+export * from "./work";

@@ -1,0 +1,1 @@
+export { type WeekCalendar, weekCalendarSchema } from "./calendar";
