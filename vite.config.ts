@@ -1,8 +1,9 @@
+/// <reference types="vitest/config" />
 import { fileURLToPath } from "node:url";
 import { reactRouter } from "@react-router/dev/vite";
 import tailwindcss from "@tailwindcss/vite";
 import { defineConfig } from "vite";
-import { nodeWorker } from "./app/jobs/node-worker-plugin";
+import { nodeWorker } from "./app/jobs/node-worker-plugin.ts";
 
 const testing = process.env.VITEST !== undefined;
 
@@ -18,4 +19,24 @@ export default defineConfig({
     ssr: { build: { rollupOptions: { input: "./app/server/app.ts" } } },
   },
   server: { host: "127.0.0.1" },
+  test: {
+    maxWorkers: 2,
+    setupFiles: ["./tests/support/loud-console.ts"],
+    projects: [
+      {
+        extends: true,
+        test: { name: "domain", include: ["tests/domain/**/*.test.{ts,tsx}"], testTimeout: 60_000 },
+      },
+      {
+        extends: true,
+        test: {
+          name: "flows",
+          include: ["tests/flows/**/*.test.{ts,tsx}", "tests/routes/**/*.test.{ts,tsx}"],
+          testTimeout: 60_000,
+          hookTimeout: 60_000,
+          pool: "forks",
+        },
+      },
+    ],
+  },
 });
