@@ -19,7 +19,14 @@ import { dirname, join } from "node:path";
 import { Readable, Transform } from "node:stream";
 import { pipeline } from "node:stream/promises";
 import S3rver from "s3rver";
-import { type ListenOptions, listen, type RunningFake, send, sendJson, type Unexpected } from "./local-server";
+import {
+  type ListenOptions,
+  listen,
+  type RunningFake,
+  send,
+  sendJson,
+  type Unexpected,
+} from "./local-server";
 
 export const STORAGE_BUCKET = "kerfpost";
 export const STORAGE_ACCESS_KEY = "S3RVER";

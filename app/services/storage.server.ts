@@ -9,8 +9,8 @@ import {
   DeleteObjectCommand,
   GetObjectCommand,
   HeadObjectCommand,
-  NotFound,
   NoSuchKey,
+  NotFound,
   PutObjectCommand,
   S3Client,
   S3ServiceException,
@@ -107,7 +107,8 @@ export function createStorage(config: StorageConfig): Storage {
         return { ok: true, size: meter.size() };
       } catch (error) {
         body.destroy();
-        if (error instanceof TooLarge) return { ok: false, reason: "too-large", limit: options.sizeLimit ?? 0 };
+        if (error instanceof TooLarge)
+          return { ok: false, reason: "too-large", limit: options.sizeLimit ?? 0 };
         throw error;
       } finally {
         options.signal?.removeEventListener("abort", abort);
@@ -155,5 +156,9 @@ function meterOf(limit: number) {
 
 function isMissing(error: unknown): boolean {
   if (error instanceof NoSuchKey || error instanceof NotFound) return true;
-  return error instanceof S3ServiceException && error.$metadata.httpStatusCode === 404 && error.name !== "NoSuchBucket";
+  return (
+    error instanceof S3ServiceException &&
+    error.$metadata.httpStatusCode === 404 &&
+    error.name !== "NoSuchBucket"
+  );
 }

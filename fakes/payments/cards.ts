@@ -52,7 +52,8 @@ export type CardCheck =
 /** Checks the pay page's fields as its browser side would, before anything is charged. `now` in seconds. */
 export function checkCard(fields: CardFields, now: number): CardCheck {
   const email = fields.email.trim();
-  if (!/^[^@\s]+@[^@\s]+$/.test(email)) return { ok: false, field: "email", message: "Your email is invalid." };
+  if (!/^[^@\s]+@[^@\s]+$/.test(email))
+    return { ok: false, field: "email", message: "Your email is invalid." };
   const number = fields.number.replace(/[\s-]/g, "");
   const outcome = CARDS[number];
   if (!outcome)

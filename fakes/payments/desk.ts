@@ -1,6 +1,6 @@
 /** The acts of the payment service on its own objects: sessions, payments, refunds, and the events they cause. */
 import { brandOf, type Card } from "./cards";
-import { invalidRequest, missingResource, PaymentsFailure } from "./errors";
+import { invalidRequest, missingResource } from "./errors";
 import {
   type CardError,
   type Charge,
@@ -10,7 +10,6 @@ import {
   newId,
   type PaymentIntent,
   type PaymentsState,
-  type Refund,
   type SessionDetails,
 } from "./objects";
 
@@ -30,14 +29,6 @@ export interface NewSession {
   metadata: Metadata;
   submitType: string | null;
   details: SessionDetails;
-}
-
-export interface NewRefund {
-  paymentIntent: string | undefined;
-  charge: string | undefined;
-  amount: number | undefined;
-  reason: string | null;
-  metadata: Metadata;
 }
 
 export type PayResult =
@@ -77,13 +68,19 @@ export class Desk {
     const created = now();
     const expiresAt = wanted.expiresAt ?? created + LONGEST_SESSION;
     if (expiresAt < created + SHORTEST_SESSION - 5)
-      throw invalidRequest("The `expires_at` timestamp must be at least 30 minutes from Checkout Session creation.", {
-        param: "expires_at",
-      });
+      throw invalidRequest(
+        "The `expires_at` timestamp must be at least 30 minutes from Checkout Session creation.",
+        {
+          param: "expires_at",
+        },
+      );
     if (expiresAt > created + LONGEST_SESSION + 5)
-      throw invalidRequest("The `expires_at` timestamp must be less than 24 hours from Checkout Session creation.", {
-        param: "expires_at",
-      });
+      throw invalidRequest(
+        "The `expires_at` timestamp must be less than 24 hours from Checkout Session creation.",
+        {
+          param: "expires_at",
+        },
+      );
     const id = newId("cs_test");
     const session: CheckoutSession = {
       id,
@@ -182,7 +179,11 @@ export class Desk {
     if (confirmed) return this.complete(session, intent, card, email);
     const message =
       "We are unable to authenticate your payment method. Please choose a different payment method and try again.";
-    this.decline(intent, card, email, { type: "card_error", code: "payment_intent_authentication_failure", message });
+    this.decline(intent, card, email, {
+      type: "card_error",
+      code: "payment_intent_authentication_failure",
+      message,
+    });
     return { kind: "declined", message };
   }
 
@@ -285,81 +286,4 @@ export class Desk {
     if (!charge) throw missingResource("charge", id);
     return charge;
   }
-
-  refundOf(id: string): Refund {
-    const refund = this.parts.state.refunds[id];
-    if (!refund) throw missingResource("refund", id);
-    return refund;
-  }
-
-  refund(wanted: NewRefund): Refund {
-    const charge = this.chargeToRefund(wanted);
-    const left = charge.amount_captured - charge.amount_refunded;
-    if (left === 0)
-      throw invalidRequest(`Charge ${charge.id} has already been refunded.`, { code: "charge_already_refunded" });
-    const amount = wanted.amount ?? left;
-    if (amount < 1)
-      throw invalidRequest("This value must be greater than or equal to 1.", {
-        code: "parameter_invalid_integer",
-        param: "amount",
-      });
-    if (amount > left)
-      throw invalidRequest(
-        `Refund amount (${inDollars(amount)}) is greater than unrefunded amount on charge (${inDollars(left)})`,
-        { param: "amount" },
-      );
-    const refund: Refund = {
-      id: newId("re"),
-      object: "refund",
-      amount,
-      balance_transaction: null,
-      charge: charge.id,
-      created: this.parts.now(),
-      currency: charge.currency,
-      metadata: wanted.metadata,
-      payment_intent: charge.payment_intent,
-      reason: wanted.reason,
-      receipt_number: null,
-      status: "succeeded",
-    };
-    this.parts.state.refunds[refund.id] = refund;
-    charge.amount_refunded += amount;
-    charge.refunded = charge.amount_refunded === charge.amount_captured;
-    this.parts.emit("refund.created", refund);
-    this.parts.emit("charge.refunded", charge);
-    this.parts.emit("refund.updated", refund);
-    return refund;
-  }
-
-  /** A bank sends a refund back days later: the money is the shop's again. */
-  failRefund(id: string): Refund {
-    const refund = this.refundOf(id);
-    if (refund.status === "failed") return refund;
-    const charge = this.charge(refund.charge);
-    refund.status = "failed";
-    refund.failure_reason = "expired_or_canceled_card";
-    charge.amount_refunded -= refund.amount;
-    charge.refunded = false;
-    this.parts.emit("refund.failed", refund);
-    this.parts.emit("refund.updated", refund);
-    return refund;
-  }
-
-  private chargeToRefund(wanted: NewRefund): Charge {
-    if (wanted.charge) return this.charge(wanted.charge);
-    if (!wanted.paymentIntent)
-      throw invalidRequest("One of the following params should be provided for this request: payment_intent or charge.");
-    const intent = this.intent(wanted.paymentIntent);
-    const charge = intent.latest_charge ? this.charge(intent.latest_charge) : undefined;
-    if (!charge || charge.status !== "succeeded")
-      throw new PaymentsFailure(400, {
-        type: "invalid_request_error",
-        message: `This PaymentIntent (${intent.id}) does not have a successful charge to refund.`,
-      });
-    return charge;
-  }
-}
-
-function inDollars(amount: number): string {
-  return `$${(amount / 100).toFixed(2)}`;
 }

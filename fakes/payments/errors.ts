@@ -19,7 +19,10 @@ export class PaymentsFailure extends Error {
   }
 }
 
-export function invalidRequest(message: string, details: { code?: string; param?: string } = {}): PaymentsFailure {
+export function invalidRequest(
+  message: string,
+  details: { code?: string; param?: string } = {},
+): PaymentsFailure {
   return new PaymentsFailure(400, { type: "invalid_request_error", message, ...details });
 }
 

@@ -70,7 +70,8 @@ export class WebhookSender {
 
   /** Resolves once nothing is on its way and no retry is waiting. */
   async settled(): Promise<void> {
-    while (this.timers.size > 0 || this.running.size > 0) await new Promise((resolve) => setTimeout(resolve, 5));
+    while (this.timers.size > 0 || this.running.size > 0)
+      await new Promise((resolve) => setTimeout(resolve, 5));
   }
 
   /** Takes up again what had not been delivered when the fake was stopped. */
