@@ -1,2 +1,15 @@
+/** What an order costs, line by line, and where each line comes from. */
+export { compareQuotes, type LineDifference } from "./compare-quotes";
 export { type PriceBook, priceBookSchema } from "./price-book";
-export type { LineKind, PricedPart, PricedQuote, PricedStock, QuoteFacts, QuoteLine } from "./quote";
+export { priceOrder } from "./price-order";
+export type {
+  LineKind,
+  PlannedParcel,
+  PricedPart,
+  PricedQuote,
+  PricedStock,
+  PriceOrder,
+  QuoteFacts,
+  QuoteLine,
+} from "./quote";
+export { nestedArea, type PlannedStock, planSheets, planStock } from "./sheets";

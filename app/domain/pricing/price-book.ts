@@ -37,8 +37,18 @@ export const priceBookSchema = z.object({
   /** Sanding, seconds per metre of edge. */
   sanding: z.object({ none: share, arrises: share, "grit-150": share }),
   packing: z.object({ perOrder: money, perPiece: money }),
-  /** Freight until carrier rates are asked live: a base per parcel and cents per kilogram. */
-  freight: z.object({ perParcel: money, perKilogram: money, maxParcelKilograms: z.number().positive() }),
+  /**
+   * Freight until carrier rates are asked live: a base per parcel and cents per kilogram, or on pallets, which
+   * is what a panel too large or heavy for a parcel needs.
+   */
+  freight: z.object({
+    perParcel: money,
+    perKilogram: money,
+    maxParcelKilograms: z.number().positive(),
+    perPallet: money,
+    palletPerKilogram: money,
+    maxPalletKilograms: z.number().positive(),
+  }),
   minimumOrder: money,
 });
 export type PriceBook = z.infer<typeof priceBookSchema>;

@@ -24,6 +24,12 @@ export interface PricedPart {
   readonly box: { readonly width: number; readonly height: number };
 }
 
+/** A parcel as it is planned: kilograms with packing. `oversize` is beyond what a parcel may be, so goes on a pallet. */
+export interface PlannedParcel {
+  readonly kilograms: number;
+  readonly oversize: boolean;
+}
+
 /** Everything on one stock. */
 export interface PricedStock {
   readonly materialId: string;
@@ -45,9 +51,13 @@ export interface QuoteFacts {
   readonly leaveTabs: boolean;
   readonly delivery: "ship" | "pick-up";
   readonly shipToRegion: string | null;
+  /** How the order would be packed, from the shipping room; empty for pick-up. */
+  readonly parcels: readonly PlannedParcel[];
   readonly taxExempt: boolean;
   readonly tax: { readonly rate: number; readonly freightTaxable: boolean; readonly region: string };
+  /** Share of a sheet planned to become parts, and the room left between them, until the order is nested. */
   readonly plannedYield: number;
+  readonly spacing: number;
 }
 
 export interface QuoteLine {

@@ -22,4 +22,4 @@ export {
 } from "./length";
 export { type Cents, cents, formatMoney, roundHalfUp } from "./money";
 export { formatMinutes, type Minutes, minutes } from "./time";
-export { formatKilograms, KG_PER_LB, kilogramsToPounds, poundsToKilograms } from "./weight";
+export { formatKilograms, KG_PER_LB, kilogramsToPounds, panelKilograms, poundsToKilograms } from "./weight";

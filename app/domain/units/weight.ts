@@ -6,3 +6,7 @@ export const poundsToKilograms = (lb: number): number => lb * KG_PER_LB;
 /** `12.6 kg · 27.8 lb` */
 export const formatKilograms = (kg: number): string =>
   `${kg.toFixed(1)} kg · ${kilogramsToPounds(kg).toFixed(1)} lb`;
+
+/** Kilograms of a flat panel: area in mm2, thickness in mm, density in kg/m3. */
+export const panelKilograms = (area: number, thickness: number, density: number): number =>
+  (area * thickness * density) / 1e9;
