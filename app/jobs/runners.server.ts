@@ -1,0 +1,48 @@
+import { setTimeout as pause } from "node:timers/promises";
+import { jobHandlers } from "./handlers.server";
+import { sendNextMail } from "./outbox.server";
+import { runNextJob } from "./run-job.server";
+import { sleepUntilWoken } from "./wake.server";
+
+export interface Runners {
+  /** Takes no more work and resolves when what runs has ended. */
+  stop(): Promise<void>;
+}
+
+/** Jobs at once; the worker threads' own limit stands in the pool. */
+const JOB_RUNNERS = 2;
+const JOB_POLL_MS = 500;
+const MAIL_POLL_MS = 1_000;
+/** After an error of the database itself. */
+const PAUSE_MS = 2_000;
+
+/** Starts this process's runners of jobs and of outgoing mail. */
+export function startRunners(): Runners {
+  const stopping = new AbortController();
+  const loops = [
+    ...Array.from({ length: JOB_RUNNERS }, () =>
+      loop(() => runNextJob(jobHandlers), JOB_POLL_MS, stopping.signal),
+    ),
+    loop(() => sendNextMail(), MAIL_POLL_MS, stopping.signal),
+  ];
+  return {
+    async stop() {
+      stopping.abort();
+      await Promise.all(loops);
+    },
+  };
+}
+
+/** Works while there is work, then sleeps until woken or until it is time to look again. */
+async function loop(work: () => Promise<boolean>, pollMs: number, signal: AbortSignal): Promise<void> {
+  while (!signal.aborted) {
+    try {
+      if (await work()) continue;
+    } catch (error) {
+      console.error("A runner failed:", error);
+      await pause(PAUSE_MS, undefined, { signal }).catch(() => undefined);
+      continue;
+    }
+    await sleepUntilWoken(pollMs, signal);
+  }
+}
