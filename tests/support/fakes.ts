@@ -62,7 +62,7 @@ export function takeUnexpected(fakes: Fakes) {
  * Fakes and clients for the tests of one file, started before and stopped after them. A request unknown to a
  * fake fails the test that made it.
  */
-export function useFakes() {
+export function fakesForTests() {
   let running: { fakes: Fakes; services: ReturnType<typeof servicesFor> } | undefined;
   const current = () => {
     if (!running) throw new Error("The fakes run only inside tests and their hooks.");
