@@ -1,0 +1,24 @@
+export type ButtonVariant = "primary" | "plain" | "chosen" | "quiet" | "danger";
+export type ButtonSize = "small" | "normal" | "large" | "floor";
+
+const VARIANT: Readonly<Record<ButtonVariant, string>> = {
+  primary: "border-blue bg-blue text-on-blue hover:opacity-90",
+  plain: "border-line bg-sheet text-ink hover:border-edge",
+  chosen: "border-blue bg-blue-wash text-blue",
+  quiet: "border-transparent bg-transparent text-blue hover:underline underline-offset-4",
+  danger: "border-ink bg-sheet text-amber hover:bg-amber-wash",
+};
+
+/** Under a finger every size grows to 44 px (WCAG 2.2, 2.5.5); on the floor, in gloves, to 56 px. */
+const SIZE: Readonly<Record<ButtonSize, string>> = {
+  small: "min-h-7 px-2.5 text-small pointer-coarse:min-h-11",
+  normal: "min-h-9 px-4 text-body pointer-coarse:min-h-11",
+  large: "min-h-11 px-5 text-body",
+  floor: "min-h-14 px-6 text-floor",
+};
+
+/** The classes of a button or of a link that looks like one. */
+export function buttonLook(variant: ButtonVariant, size: ButtonSize, wide = false): string {
+  const padding = variant === "quiet" ? " px-0" : "";
+  return `inline-flex items-center justify-center gap-2 rounded-sheet border font-medium text-center no-underline disabled:opacity-55 disabled:hover:opacity-55 aria-disabled:opacity-55 ${VARIANT[variant]} ${SIZE[size]}${padding}${wide ? " w-full" : ""}`;
+}
