@@ -19,7 +19,13 @@ export interface DrawnText {
   readonly layer: string;
 }
 
-export type IgnoredReason = "not-a-curve" | "paper-space" | "three-dimensional" | "damaged" | "too-deep" | "too-many";
+export type IgnoredReason =
+  | "not-a-curve"
+  | "paper-space"
+  | "three-dimensional"
+  | "damaged"
+  | "too-deep"
+  | "too-many";
 
 export interface Ignored {
   readonly type: string;
@@ -42,4 +48,6 @@ export interface Drawing {
   readonly notes: readonly string[];
 }
 
-export type ReadResult = { readonly ok: true; readonly drawing: Drawing } | { readonly ok: false; readonly reason: string };
+export type ReadResult =
+  | { readonly ok: true; readonly drawing: Drawing }
+  | { readonly ok: false; readonly reason: string };
