@@ -20,15 +20,64 @@ const SHORTEST_BEGINNING = 3;
  */
 const WORDS: readonly (readonly [LayerSense, readonly string[]])[] = [
   ["note", ["NOCUT", "DONOTCUT", "DONTCUT", "NOTCUT", "NOPRINT", "NOTE", "NOTES", "GRAIN", "GRAINDIRECTION"]],
-  ["engrave", ["ENGRAVE", "ENGRAVING", "ENGRAVED", "ETCH", "ETCHING", "SCRIBE", "SCORE", "VCARVE", "VGROOVE", "MARKING"]],
+  [
+    "engrave",
+    [
+      "ENGRAVE",
+      "ENGRAVING",
+      "ENGRAVED",
+      "ETCH",
+      "ETCHING",
+      "SCRIBE",
+      "SCORE",
+      "VCARVE",
+      "VGROOVE",
+      "MARKING",
+    ],
+  ],
   ["text", ["TEXT", "TEXTS", "MTEXT", "ANNOTATION", "ANNOTATIONS", "ANNO", "LABEL", "LABELS"]],
-  ["note", ["DIM", "DIMS", "DIMENSION", "DIMENSIONS", "DEFPOINTS", "CONSTRUCTION", "CENTERLINE", "CENTERLINES", "CENTRELINE", "CENTRELINES"]],
+  [
+    "note",
+    [
+      "DIM",
+      "DIMS",
+      "DIMENSION",
+      "DIMENSIONS",
+      "DEFPOINTS",
+      "CONSTRUCTION",
+      "CENTERLINE",
+      "CENTERLINES",
+      "CENTRELINE",
+      "CENTRELINES",
+    ],
+  ],
   ["note", ["CENTERMARK", "CENTERMARKS", "HATCHING", "TITLEBLOCK", "REFERENCE", "IGNORE"]],
   ["drill", ["DRILL", "DRILLS", "DRILLING", "BORE", "BORES", "BORING", "CUP", "HINGECUP", "PILOT", "PILOTS"]],
-  ["pocket", ["POCKET", "POCKETS", "POCKETING", "RECESS", "RECESSES", "DADO", "DADOS", "DADOES", "RABBET", "RABBETS", "REBATE", "REBATES", "GROOVE", "GROOVES"]],
+  [
+    "pocket",
+    [
+      "POCKET",
+      "POCKETS",
+      "POCKETING",
+      "RECESS",
+      "RECESSES",
+      "DADO",
+      "DADOS",
+      "DADOES",
+      "RABBET",
+      "RABBETS",
+      "REBATE",
+      "REBATES",
+      "GROOVE",
+      "GROOVES",
+    ],
+  ],
   ["through", ["THRU", "THROUGH"]],
   ["cut-through", ["INSIDE", "INNER", "INTERIOR", "CUTOUT", "CUTOUTS", "OPENING", "OPENINGS"]],
-  ["outside", ["OUTSIDE", "OUTER", "OUTLINE", "OUTLINES", "PROFILE", "PROFILES", "PERIMETER", "EXTERIOR", "CONTOUR"]],
+  [
+    "outside",
+    ["OUTSIDE", "OUTER", "OUTLINE", "OUTLINES", "PROFILE", "PROFILES", "PERIMETER", "EXTERIOR", "CONTOUR"],
+  ],
 ];
 type LayerSense = "note" | "text" | "engrave" | "drill" | "pocket" | "through" | "cut-through" | "outside";
 /** Words that mean a depth wherever they stand beside a number, and those that do only on a layer known to be cut partly through. */
@@ -36,7 +85,13 @@ const LEAVE_ALWAYS = ["LEAVE", "LEAVES", "LEAVING"];
 const LEAVE_IN_POCKETS = [...LEAVE_ALWAYS, "REMAIN", "REMAINS", "REMAINING", "FLOOR", "SKIN"];
 const DEPTH_ALWAYS = ["DEEP", "DEPTH"];
 const DEPTH_IN_POCKETS = [...DEPTH_ALWAYS, "D", "DP", "Z"];
-const MILLIMETRES: Readonly<Record<string, number>> = { MM: 1, CM: 10, IN: INCH_IN_MM, INCH: INCH_IN_MM, INCHES: INCH_IN_MM };
+const MILLIMETRES: Readonly<Record<string, number>> = {
+  MM: 1,
+  CM: 10,
+  IN: INCH_IN_MM,
+  INCH: INCH_IN_MM,
+  INCHES: INCH_IN_MM,
+};
 
 type Token = { readonly word: string } | { readonly value: number; readonly unit: number | null };
 
@@ -48,7 +103,8 @@ function tokensOf(name: string): Token[] {
   for (const match of upper.matchAll(pattern)) {
     const [, numerator, denominator, decimal, word, quote] = match;
     const last = found.at(-1);
-    const afterNumber = last && "value" in last && last.unit === null && /[\d\s]/.test(upper[match.index - 1]);
+    const afterNumber =
+      last && "value" in last && last.unit === null && /[\d\s]/.test(upper[match.index - 1]);
     if (word && afterNumber) {
       const unit = word.match(/^(MM|CM|INCHES|INCH|IN)(?=$|DEEP|DEPTH|LEAVE|SKIN|FLOOR)/)?.[1];
       if (unit) {
@@ -88,7 +144,8 @@ function valueBeside(tokens: readonly Token[], words: readonly string[], bareUni
     const token = tokens[i];
     if (!("word" in token) || !words.includes(token.word)) continue;
     for (const neighbour of [tokens[i + 1], tokens[i - 1]]) {
-      if (neighbour && "value" in neighbour && neighbour.value > 0) return neighbour.value * (neighbour.unit ?? bareUnit);
+      if (neighbour && "value" in neighbour && neighbour.value > 0)
+        return neighbour.value * (neighbour.unit ?? bareUnit);
     }
   }
   return null;
@@ -129,7 +186,11 @@ export function readLayerName(name: string, bareUnit: number): LayerReading | nu
     case "through":
       return { kind: "cut-through", depth: null, what: null };
     case "cut-through":
-      return { kind: depth && !through ? "pocket" : "cut-through", depth: through ? null : depth, what: null };
+      return {
+        kind: depth && !through ? "pocket" : "cut-through",
+        depth: through ? null : depth,
+        what: null,
+      };
     case "outside":
       return { kind: "outside", depth: null, what: null };
     default:

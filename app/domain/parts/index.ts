@@ -1,0 +1,16 @@
+/** Parts out of a drawing in millimetres: joining, containment, set-asides, operations, equal parts counted together. */
+export { type FindPartsRules, findParts, type Restored } from "./find-parts";
+export { guessLayerRules } from "./layer-names";
+export { DRILL_SIZES } from "./operations";
+export type {
+  Bridge,
+  Copy,
+  Depth,
+  Feature,
+  LayerRule,
+  OpenChain,
+  OperationKind,
+  Part,
+  PartsReport,
+  SetAside,
+} from "./part";
