@@ -13,7 +13,9 @@ export function Money({ cents, currency = "usd", show = "plain" }: MoneyProps) {
   const whole = formatMoney(cents, currency).replace("-", "−");
   const words = show === "line" ? whole.replace(/[^\d.,−]/g, "") : whole;
   return (
-    <span className={`measure whitespace-nowrap ${show === "price" ? "text-price font-semibold" : ""}`}>
+    <span
+      className={`measure whitespace-nowrap ${show === "price" ? "text-price font-semibold text-ink" : ""}`}
+    >
       {words}
     </span>
   );
