@@ -29,6 +29,8 @@ type Handler = (request: IncomingMessage, response: ServerResponse) => Promise<v
 export async function listen(handler: Handler, options: ListenOptions) {
   const host = options.host ?? "127.0.0.1";
   const server = createServer((request, response) => {
+    // Browsers ask for it unbidden; no fake has one.
+    if (request.url === "/favicon.ico") return send(response, 404, "text/plain", "");
     handler(request, response).catch((error: unknown) => {
       console.error("A local stand-in failed:", error);
       if (response.headersSent) response.destroy();

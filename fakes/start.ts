@@ -28,6 +28,10 @@ const fakes = await startFakes({
   dataDirectory: environment.FAKE_DATA_DIRECTORY,
   webhookUrl: environment.FAKE_WEBHOOK_URL,
   webhookSecret: environment.FAKE_WEBHOOK_SECRET,
+}).catch((error: NodeJS.ErrnoException & { port?: number }) => {
+  if (error.code !== "EADDRINUSE") throw error;
+  console.error(`Port ${error.port} is taken: are the local stand-ins running already?`);
+  process.exit(1);
 });
 
 process.stdout.write(

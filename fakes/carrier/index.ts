@@ -8,7 +8,7 @@
  * Every request carries `Authorization: Bearer key`. Errors: {error: {code, message}}.
  *
  * What a real carrier would do and this one does not: check addresses, bill, schedule pick-ups, or move a
- * parcel by itself. Tests and the demo move it with `advance`.
+ * parcel by itself. Tests and the demo move it with `advance`, or POST /_fake/advance/:number.
  */
 import { randomInt, randomUUID } from "node:crypto";
 import type { IncomingMessage, ServerResponse } from "node:http";
@@ -107,6 +107,8 @@ export async function startCarrier(options: CarrierFakeOptions): Promise<Carrier
     const path = new URL(request.url ?? "/", "http://carrier").pathname;
     const method = request.method ?? "GET";
     if (path === "/_fake/unexpected") return sendJson(response, 200, unexpected);
+    const moving = /^\/_fake\/advance\/(\w+)$/.exec(path);
+    if (moving && method === "POST") return sendJson(response, 200, { status: advance(moving[1] ?? "") });
     const body = await readBody(request);
     try {
       if (failures > 0) {
@@ -221,20 +223,22 @@ export async function startCarrier(options: CarrierFakeOptions): Promise<Carrier
     return kept.label;
   }
 
+  function advance(trackingNumber: string): ParcelStatus {
+    const kept = byNumber(trackingNumber);
+    const next = STATIONS[STATIONS.indexOf(kept.label.status) + 1];
+    if (kept.label.status === "void" || !next)
+      throw new Error(`This parcel goes nowhere: ${kept.label.status}.`);
+    record(kept, next);
+    return next;
+  }
+
   const server = await listen(answer, options);
   return {
     ...server,
     key,
     unexpected,
     labels: () => state.labels.map(({ label }) => label),
-    advance(trackingNumber) {
-      const kept = byNumber(trackingNumber);
-      const next = STATIONS[STATIONS.indexOf(kept.label.status) + 1];
-      if (kept.label.status === "void" || !next)
-        throw new Error(`This parcel goes nowhere: ${kept.label.status}.`);
-      record(kept, next);
-      return next;
-    },
+    advance,
     failNext(count) {
       failures = count;
     },

@@ -1,6 +1,6 @@
 /** The inbox: a list of caught mails, one mail with its HTML and plain parts, and JSON for tests. */
 import type { IncomingMessage, ServerResponse } from "node:http";
-import { escapeHtml, send, sendHtml, sendJson, type Unexpected } from "../local-server";
+import { escapeHtml, sendHtml, sendJson, type Unexpected } from "../local-server";
 import type { CaughtMail, Mailbox } from "./messages";
 
 /** Answers the inbox's requests: `/`, `/messages/:id`, `/messages/:id/html`, `/api/messages`, `/api/messages/:id`. */
@@ -30,7 +30,6 @@ export async function answerInbox(
       if (single[3]) return sendHtml(response, 200, withBase(mail.html));
       return sendHtml(response, 200, mailPage(mail));
     }
-    if (address.pathname === "/favicon.ico") return send(response, 404, "text/plain", "");
   }
   unexpected.push({ method, path: address.pathname, why: "the inbox has no such request" });
   sendJson(response, 501, { error: `The local mail stand-in does not know ${method} ${address.pathname}.` });

@@ -23,6 +23,7 @@ import { Desk, type Emit } from "./desk";
 import { emptyState, newId, type PaymentsState, type ServiceEvent, type StoredEvent } from "./objects";
 import { createPayPage, type PayPage } from "./pay-page";
 import { Refunds } from "./refunds";
+import { answerSwitch } from "./switches";
 import { WebhookSender, type WebhookTarget } from "./webhooks";
 
 export { signatureHeader } from "./webhooks";
@@ -119,6 +120,10 @@ export async function startPayments(options: PaymentsFakeOptions): Promise<Payme
     desk.sweep();
     if (state.events.length > before) changed();
   };
+  const passTime = (seconds: number) => {
+    passed += seconds;
+    sweep();
+  };
   const apiParts = {
     state,
     desk,
@@ -137,8 +142,10 @@ export async function startPayments(options: PaymentsFakeOptions): Promise<Payme
     const address = new URL(request.url ?? "/", "http://payments");
     sweep();
     if (address.pathname.startsWith("/v1/")) return answerApi(request, response, address, apiParts);
-    if (address.pathname === "/_fake/unexpected") return sendJson(response, 200, unexpected);
-    if (address.pathname === "/_fake/events") return sendJson(response, 200, state.events);
+    if (
+      await answerSwitch(request, response, address, { sender, events: state.events, unexpected, passTime })
+    )
+      return;
     if (await page.answer(request, response, address.pathname)) return;
     unexpected.push({ method: request.method ?? "GET", path: address.pathname, why: "no such page" });
     sendJson(response, 501, {
@@ -181,10 +188,7 @@ export async function startPayments(options: PaymentsFakeOptions): Promise<Payme
       refunds.fail(refundId);
       changed();
     },
-    passTime(seconds) {
-      passed += seconds;
-      sweep();
-    },
+    passTime,
     async stop() {
       clearInterval(clock);
       await sender.stop();

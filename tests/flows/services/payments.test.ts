@@ -25,19 +25,19 @@ function checkoutWanted(changes: Partial<CheckoutWanted> = {}): CheckoutWanted {
   };
 }
 
-function valueOf<Value>(result: PaymentsResult<Value>): Value {
+function taken<Value>(result: PaymentsResult<Value>): Value {
   if (!result.ok) throw new Error(`${result.reason}: ${result.message}`);
   return result.value;
 }
 
 async function newCheckout(changes: Partial<CheckoutWanted> = {}): Promise<Checkout> {
-  return valueOf(await running.services.payments.createCheckout(checkoutWanted(changes)));
+  return taken(await running.services.payments.createCheckout(checkoutWanted(changes)));
 }
 
 async function paidCheckout(): Promise<{ checkout: Checkout; paymentId: string }> {
   const { id } = await newCheckout();
   expect(running.fakes.payments.pay(id).kind).toBe("paid");
-  const checkout = valueOf(await running.services.payments.getCheckout(id));
+  const checkout = taken(await running.services.payments.getCheckout(id));
   return { checkout, paymentId: checkout.payment?.id ?? "" };
 }
 
@@ -90,7 +90,7 @@ describe("checkout", () => {
     expect(answer.headers.get("location")).toBe(
       `http://127.0.0.1:4800/orders/abc/paid?checkout=${checkout.id}`,
     );
-    const after = valueOf(await running.services.payments.getCheckout(checkout.id));
+    const after = taken(await running.services.payments.getCheckout(checkout.id));
     expect(after).toMatchObject({ status: "complete", paid: true, url: undefined });
     expect(after.payment).toMatchObject({
       status: "succeeded",
@@ -104,7 +104,7 @@ describe("checkout", () => {
       "payment_intent.succeeded",
       "checkout.session.completed",
     ]);
-    const found = valueOf(await running.services.payments.findCheckoutOfPayment(after.payment?.id ?? ""));
+    const found = taken(await running.services.payments.findCheckoutOfPayment(after.payment?.id ?? ""));
     expect(found?.id).toBe(checkout.id);
   });
 
@@ -127,7 +127,7 @@ describe("checkout", () => {
       const answer = await sendPayForm(checkout, { ...CARD, number });
       expect(answer.status).toBe(402);
       expect(await answer.text()).toContain(message);
-      const declined = valueOf(await running.services.payments.getCheckout(checkout.id));
+      const declined = taken(await running.services.payments.getCheckout(checkout.id));
       expect(declined).toMatchObject({ status: "open", paid: false });
       expect(declined.payment).toMatchObject({
         status: "requires_payment_method",
@@ -157,7 +157,7 @@ describe("checkout", () => {
     const answer = await sendPayForm(checkout, { ...CARD, ...change });
     expect(answer.status).toBe(400);
     expect(await answer.text()).toMatch(new RegExp(`name="${field}"[^>]*aria-invalid`));
-    expect(valueOf(await running.services.payments.getCheckout(checkout.id)).payment).toBeUndefined();
+    expect(taken(await running.services.payments.getCheckout(checkout.id)).payment).toBeUndefined();
   });
 
   it.each([
@@ -170,10 +170,10 @@ describe("checkout", () => {
       const asked = await sendPayForm(checkout, { ...CARD, number: "4000002500003155" });
       expect(asked.status).toBe(200);
       expect(await asked.text()).toContain("$462.50");
-      const waiting = valueOf(await running.services.payments.getCheckout(checkout.id));
+      const waiting = taken(await running.services.payments.getCheckout(checkout.id));
       expect(waiting.payment?.status).toBe("requires_action");
       expect((await sendPayForm(checkout, { answer }, "/confirm")).status).toBe(status);
-      expect(valueOf(await running.services.payments.getCheckout(checkout.id)).status).toBe(state);
+      expect(taken(await running.services.payments.getCheckout(checkout.id)).status).toBe(state);
       expect(eventTypes([checkout.id, waiting.payment?.id])).toEqual(types);
     },
   );
@@ -189,7 +189,7 @@ describe("checkout", () => {
 
   it("cannot be paid once it was expired by the shop", async () => {
     const checkout = await newCheckout();
-    const expired = valueOf(await running.services.payments.expireCheckout(checkout.id));
+    const expired = taken(await running.services.payments.expireCheckout(checkout.id));
     expect(expired).toMatchObject({ status: "expired", paid: false, url: undefined });
     expect((await fetch(checkout.url ?? "")).status).toBe(410);
     expect((await sendPayForm(checkout, CARD)).status).toBe(410);
@@ -203,9 +203,9 @@ describe("checkout", () => {
   it("expires by itself at its time", async () => {
     const checkout = await newCheckout({ expiresAt: new Date(Date.now() + 31 * 60_000) });
     running.fakes.payments.passTime(30 * 60);
-    expect(valueOf(await running.services.payments.getCheckout(checkout.id)).status).toBe("open");
+    expect(taken(await running.services.payments.getCheckout(checkout.id)).status).toBe("open");
     running.fakes.payments.passTime(2 * 60);
-    expect(valueOf(await running.services.payments.getCheckout(checkout.id)).status).toBe("expired");
+    expect(taken(await running.services.payments.getCheckout(checkout.id)).status).toBe("expired");
     expect(eventTypes([checkout.id])).toEqual(["checkout.session.expired"]);
   });
 
@@ -231,8 +231,8 @@ describe("checkout", () => {
 describe("idempotency", () => {
   it("answers the same checkout to the same key and content", async () => {
     const wanted = checkoutWanted();
-    const first = valueOf(await running.services.payments.createCheckout(wanted));
-    const again = valueOf(await running.services.payments.createCheckout(wanted));
+    const first = taken(await running.services.payments.createCheckout(wanted));
+    const again = taken(await running.services.payments.createCheckout(wanted));
     expect(again).toEqual(first);
     const raw = await sdk().checkout.sessions.list({ limit: 100 });
     expect(raw.data.filter(({ id }) => id === first.id)).toHaveLength(1);
@@ -240,7 +240,7 @@ describe("idempotency", () => {
 
   it("refuses the same key for other content", async () => {
     const wanted = checkoutWanted();
-    valueOf(await running.services.payments.createCheckout(wanted));
+    taken(await running.services.payments.createCheckout(wanted));
     const other = await running.services.payments.createCheckout({
       ...wanted,
       lines: [{ name: "Other", amount: 1_000, quantity: 1 }],
@@ -251,7 +251,7 @@ describe("idempotency", () => {
   it("refunds once when the answer was lost on its way and the SDK asked again", async () => {
     const { paymentId } = await paidCheckout();
     running.fakes.payments.failNext({ when: "after" });
-    const refund = valueOf(
+    const refund = taken(
       await running.services.payments.refund({
         idempotencyKey: `refund-of-${paymentId}`,
         paymentId,
@@ -261,7 +261,7 @@ describe("idempotency", () => {
       }),
     );
     expect(refund).toMatchObject({ amount: 10_000, status: "succeeded", paymentId });
-    const payment = valueOf(await running.services.payments.getPayment(paymentId));
+    const payment = taken(await running.services.payments.getPayment(paymentId));
     expect(payment.amountRefunded).toBe(10_000);
   });
 
@@ -289,13 +289,13 @@ describe("refunds", () => {
 
   it("gives back a part, then the rest, then nothing more", async () => {
     const { paymentId } = await paidCheckout();
-    const part = valueOf(await refund(paymentId, 6_250, `${paymentId}-a`));
+    const part = taken(await refund(paymentId, 6_250, `${paymentId}-a`));
     expect(part).toMatchObject({ amount: 6_250, metadata: { orderId: "ord_1" } });
     const tooMuch = await refund(paymentId, 40_001, `${paymentId}-b`);
     expect(tooMuch).toMatchObject({ ok: false, reason: "refused" });
     expect(tooMuch.ok ? "" : tooMuch.message).toContain("greater than unrefunded amount on charge ($400.00)");
-    valueOf(await refund(paymentId, 40_000, `${paymentId}-c`));
-    const payment = valueOf(await running.services.payments.getPayment(paymentId));
+    taken(await refund(paymentId, 40_000, `${paymentId}-c`));
+    const payment = taken(await running.services.payments.getPayment(paymentId));
     expect(payment.amountRefunded).toBe(46_250);
     expect(await refund(paymentId, 1, `${paymentId}-d`)).toMatchObject({ ok: false, reason: "refused" });
     const charge = await sdk().charges.retrieve(payment.chargeId ?? "");
@@ -307,7 +307,7 @@ describe("refunds", () => {
   it("is refused where nothing was paid", async () => {
     const checkout = await newCheckout();
     running.fakes.payments.pay(checkout.id, { number: "4000000000000002" });
-    const declined = valueOf(await running.services.payments.getCheckout(checkout.id));
+    const declined = taken(await running.services.payments.getCheckout(checkout.id));
     expect(await refund(declined.payment?.id ?? "", 100, "nothing-paid")).toMatchObject({
       ok: false,
       reason: "refused",
@@ -316,10 +316,10 @@ describe("refunds", () => {
 
   it("comes back when the bank cannot place it", async () => {
     const { paymentId } = await paidCheckout();
-    const made = valueOf(await refund(paymentId, 46_250, `${paymentId}-returned`));
+    const made = taken(await refund(paymentId, 46_250, `${paymentId}-returned`));
     running.fakes.payments.failRefund(made.id);
-    expect(valueOf(await running.services.payments.getRefund(made.id)).status).toBe("failed");
-    expect(valueOf(await running.services.payments.getPayment(paymentId)).amountRefunded).toBe(0);
+    expect(taken(await running.services.payments.getRefund(made.id)).status).toBe("failed");
+    expect(taken(await running.services.payments.getPayment(paymentId)).amountRefunded).toBe(0);
     expect(eventTypes([made.id])).toContain("refund.failed");
   });
 });

@@ -154,6 +154,21 @@ describe("signed payment events", () => {
     expect(fake.events()[0]?.delivered).toBe(true);
   });
 
+  it("obey the same switches over HTTP", async () => {
+    const turn = async (name: string): Promise<unknown> =>
+      (await fetch(`${fake.url}/_fake/${name}`, { method: "POST" })).json();
+    await turn("pause");
+    await pay();
+    await turn("settle");
+    expect(receiver.received).toEqual([]);
+    await turn("reverse");
+    const inOrder = fake.events().map(({ event }) => event.id);
+    expect(idsOf()).toEqual(inOrder.toReversed());
+    expect(await turn(`deliver-again?event=${inOrder[0]}`)).toEqual({ status: 200 });
+    expect(idsOf()).toHaveLength(3);
+    expect(await (await fetch(`${fake.url}/_fake/events`)).json()).toEqual(fake.events());
+  });
+
   it("outlive a restart, as do checkouts and remembered keys", async () => {
     const dataDirectory = await mkdtemp(join(tmpdir(), "payments-"));
     const first = await startPayments({ port: 0, dataDirectory });
