@@ -32,8 +32,8 @@ const SIGNATURES: readonly (readonly [string, string])[] = [
 /** Openings that only a pattern tells; tried after the signatures. */
 const OPENINGS: readonly (readonly [RegExp, string])[] = [
   [/^AC10\d\d(?![\r\n])/, `This is a DWG drawing. ${EXPORT_DXF}`],
-  [/^RIFF[^]{4}WEBP/s, PICTURE],
-  [/^\s*(<\?xml[^>]*>)?(\s|<!--[^]*?-->|<!DOCTYPE[^>]*>)*<svg/is, `This is an SVG picture. ${EXPORT_DXF}`],
+  [/^RIFF.{4}WEBP/s, PICTURE],
+  [/^\s*<([?!].*<)?svg/is, `This is an SVG picture. ${EXPORT_DXF}`],
   [/^solid\s/, `This is a 3D model. ${SOLID_MODEL}`],
   [/^\s*<(!DOCTYPE html|html|\?xml)/i, `This is a web or XML document. ${EXPORT_DXF}`],
 ];
