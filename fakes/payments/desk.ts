@@ -152,10 +152,9 @@ export class Desk {
     this.parts.emit("checkout.session.expired", session);
   }
 
-  /** One attempt on the pay page. The payment intent comes into being with the first attempt. */
+  /** One attempt on the pay page of a session that is still open. The payment intent comes into being with the first attempt. */
   pay(id: string, card: Card, email: string): PayResult {
     const session = this.session(id);
-    if (session.status !== "open") return { kind: "closed", session };
     const intent = this.intentOf(session);
     const { outcome } = card;
     if (outcome.kind === "asks-confirmation") {
