@@ -15,6 +15,7 @@ export default defineConfig({
       "~fakes": fileURLToPath(new URL("./fakes", import.meta.url)),
     },
   },
+  build: { assetsInlineLimit: 0 },
   environments: {
     ssr: { build: { rollupOptions: { input: "./app/server/app.ts" } } },
   },
