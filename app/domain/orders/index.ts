@@ -1,3 +1,4 @@
+export { type InterpretedFile, interpretFiles, type LayerChoice } from "./default-interpretation";
 export {
   type FileInterpretation,
   fileInterpretationSchema,
