@@ -3,7 +3,18 @@
  * real service or to a local one.
  */
 import Stripe from "stripe";
-import { z } from "zod";
+import {
+  type Checkout,
+  checkoutOf,
+  type Payment,
+  type PaymentEvent,
+  paymentEventOf,
+  paymentOf,
+  type Refund,
+  refundOf,
+} from "./payment-answers.server";
+
+export type { Checkout, Payment, PaymentEvent, Refund } from "./payment-answers.server";
 
 export interface PaymentsConfig {
   secretKey: string;
@@ -37,52 +48,12 @@ export interface CheckoutWanted {
   expiresAt?: Date | undefined;
 }
 
-export interface Payment {
-  id: string;
-  status: string;
-  /** Cents. */
-  amount: number;
-  amountReceived: number;
-  amountRefunded: number;
-  currency: string;
-  chargeId: string | undefined;
-  receiptUrl: string | undefined;
-  /** The service's words to the payer after a failed attempt. */
-  failure: string | undefined;
-  metadata: Record<string, string>;
-}
-
-export interface Checkout {
-  id: string;
-  status: "open" | "complete" | "expired";
-  paid: boolean;
-  /** Where to send the payer; gone once complete or expired. */
-  url: string | undefined;
-  /** Cents. */
-  amount: number;
-  currency: string;
-  expiresAt: Date;
-  metadata: Record<string, string>;
-  /** There from the first attempt on. */
-  payment: Payment | undefined;
-}
-
 export interface RefundWanted {
   idempotencyKey: string;
   paymentId: string;
   /** Cents. */
   amount: number;
   reason: "duplicate" | "fraudulent" | "requested_by_customer";
-  metadata: Record<string, string>;
-}
-
-export interface Refund {
-  id: string;
-  paymentId: string;
-  /** Cents. */
-  amount: number;
-  currency: string;
-  status: string;
   metadata: Record<string, string>;
 }
 
@@ -93,18 +64,6 @@ export interface Refund {
 export type PaymentsReason = "conflict" | "not-found" | "refused" | "unavailable" | "misconfigured";
 export type PaymentsFailure = { ok: false; reason: PaymentsReason; message: string };
 export type PaymentsResult<Value> = { ok: true; value: Value } | PaymentsFailure;
-
-/** What a verified webhook says; the object itself is fetched anew, since events come in any order. */
-export interface PaymentEvent {
-  id: string;
-  type: string;
-  createdAt: Date;
-  /** `checkout.session`, `payment_intent`, `charge`, `refund`, ... */
-  objectType: string;
-  objectId: string;
-  /** The payment the object belongs to, when it names one. */
-  paymentId: string | undefined;
-}
 
 export type VerifiedEvent =
   | { ok: true; event: PaymentEvent }
@@ -203,39 +162,11 @@ export function createPayments(config: PaymentsConfig): Payments {
         if (error instanceof SyntaxError) return { ok: false, reason: "not-an-event" };
         throw error;
       }
-      const parsed = eventShape.safeParse(event);
-      if (!parsed.success) return { ok: false, reason: "not-an-event" };
-      const { id, type, created, data } = parsed.data;
-      return {
-        ok: true,
-        event: {
-          id,
-          type,
-          createdAt: new Date(created * 1000),
-          objectType: data.object.object,
-          objectId: data.object.id,
-          paymentId:
-            data.object.object === "payment_intent"
-              ? data.object.id
-              : (data.object.payment_intent ?? undefined),
-        },
-      };
+      const read = paymentEventOf(event);
+      return read ? { ok: true, event: read } : { ok: false, reason: "not-an-event" };
     },
   };
 }
-
-const eventShape = z.object({
-  id: z.string(),
-  type: z.string(),
-  created: z.number(),
-  data: z.object({
-    object: z.object({
-      id: z.string(),
-      object: z.string(),
-      payment_intent: z.string().nullish(),
-    }),
-  }),
-});
 
 function hostOf(
   apiUrl: string | undefined,
@@ -266,55 +197,4 @@ function reasonOf(error: InstanceType<typeof Stripe.errors.StripeError>): Paymen
   return error.statusCode !== undefined && error.statusCode >= 500 && error.statusCode !== 501
     ? "unavailable"
     : "refused";
-}
-
-const checkoutStatus = z.enum(["open", "complete", "expired"]);
-
-function checkoutOf(session: Stripe.Checkout.Session): Checkout {
-  if (session.amount_total === null || session.currency === null)
-    throw new Error("The payment service answered a checkout without an amount.");
-  return {
-    id: session.id,
-    status: checkoutStatus.parse(session.status),
-    paid: session.payment_status === "paid",
-    url: session.url ?? undefined,
-    amount: session.amount_total,
-    currency: session.currency,
-    expiresAt: new Date(session.expires_at * 1000),
-    metadata: session.metadata ?? {},
-    payment: isObject(session.payment_intent) ? paymentOf(session.payment_intent) : undefined,
-  };
-}
-
-function paymentOf(intent: Stripe.PaymentIntent): Payment {
-  const charge = isObject(intent.latest_charge) ? intent.latest_charge : undefined;
-  return {
-    id: intent.id,
-    status: intent.status,
-    amount: intent.amount,
-    amountReceived: intent.amount_received,
-    amountRefunded: charge?.amount_refunded ?? 0,
-    currency: intent.currency,
-    chargeId: charge?.id,
-    receiptUrl: charge?.receipt_url ?? undefined,
-    failure: intent.last_payment_error?.message,
-    metadata: intent.metadata,
-  };
-}
-
-function refundOf(refund: Stripe.Refund): Refund {
-  const paymentId = isObject(refund.payment_intent) ? refund.payment_intent.id : refund.payment_intent;
-  if (!paymentId) throw new Error("The payment service answered a refund that names no payment.");
-  return {
-    id: refund.id,
-    paymentId,
-    amount: refund.amount,
-    currency: refund.currency,
-    status: refund.status ?? "unknown",
-    metadata: refund.metadata ?? {},
-  };
-}
-
-function isObject<Value extends object>(value: string | Value | null): value is Value {
-  return typeof value === "object" && value !== null;
 }
