@@ -8,7 +8,7 @@ import { bareUnitOf } from "./layer-names";
 import { measureDrawn } from "./measure-drawn";
 import { openChainOf } from "./open-chain";
 import { DRILL_SIZES, joiningGroups, layerReader } from "./operations";
-import { type Outline, outlineOf } from "./outline";
+import { type Outline, outlinesOf } from "./outline";
 import { lengthWithoutOverlaps } from "./overlaps";
 import type { Bridge, LayerRule, PartsReport } from "./part";
 import { partsOfKinds } from "./parts-of-kinds";
@@ -87,11 +87,12 @@ export function findParts(drawing: Drawing, rules: FindPartsRules): PartsReport 
       drawn.filter((_, i) => repeated[i] < 0),
       joinTolerances,
     );
-    const outlines = distinctOutlines(joined.loops.map(outlineOf), extent * SAME_CURVE);
-    if (group === "through") through.push(...outlines);
-    else worked.push(...outlines);
-    if (group.startsWith("engrave")) engraved.push(...joined.open);
-    else open.push(...joined.open);
+    const { outlines, flat } = outlinesOf(joined.loops, joinTolerances.node);
+    const distinct = distinctOutlines(outlines, extent * SAME_CURVE);
+    if (group === "through") through.push(...distinct);
+    else worked.push(...distinct);
+    if (group.startsWith("engrave")) engraved.push(...joined.open, ...flat);
+    else open.push(...joined.open, ...flat);
     bridges.push(...joined.bridges);
   }
 

@@ -3,12 +3,13 @@ import { type Box, boxIsEmpty, pathLength } from "../geometry";
 import { nestOutlines } from "./containment";
 import { distinctOutlines } from "./duplicates";
 import { type JoinTolerances, joinPaths } from "./joining";
-import { outlineOf } from "./outline";
+import { outlinesOf } from "./outline";
 import type { PartsReport } from "./part";
 
 /**
  * All that is drawn, hidden layers included, before anything is set aside. `duplicates` names for each path an
- * earlier equal one or -1; equal outlines count as loops but once in the depths.
+ * earlier equal one or -1; outlines that
+ * equal each other or enclose nothing count as loops, but not twice and not at all in the depths.
  */
 export function measureDrawn(
   drawing: Drawing,
@@ -31,7 +32,9 @@ export function measureDrawn(
     tolerances,
   );
   const depths: Record<string, number> = {};
-  for (const depth of nestOutlines(distinctOutlines(joined.loops.map(outlineOf), sameCurve)).depth) {
+  for (const depth of nestOutlines(
+    distinctOutlines(outlinesOf(joined.loops, tolerances.node).outlines, sameCurve),
+  ).depth) {
     depths[depth] = (depths[depth] ?? 0) + 1;
   }
   return {

@@ -9,6 +9,7 @@ import {
   reversePath,
 } from "../geometry";
 import type { Chain } from "./joining";
+import { widestStretch } from "./level-line";
 
 /** A closed outline with what is asked of it again and again. Counter-clockwise. */
 export interface Outline {
@@ -27,7 +28,7 @@ export interface Outline {
 /** Chords for containment: a thousandth of the outline's extent, at most 0.05 mm. */
 const chordTolerance = (box: Box): number => Math.min(0.05, Math.max(1e-9, boxExtent(box) * 1e-3));
 
-export function outlineOf(chain: Chain): Outline {
+function outlineOf(chain: Chain): Outline {
   const area = pathArea(chain.path);
   const box = pathBox(chain.path);
   const path = area < 0 ? reversePath(chain.path) : chain.path;
@@ -41,6 +42,27 @@ export function outlineOf(chain: Chain): Outline {
     polygon: flattenPath(path, chordTolerance(box)),
     members,
   };
+}
+
+/** Whether a closed outline encloses something wider than `sliver`, even where it crosses itself. */
+const enclosesArea = ({ polygon }: Outline, sliver: number): boolean => {
+  const stretch = widestStretch(polygon);
+  return stretch !== null && stretch.width > sliver;
+};
+
+/** Closed chains that enclose something as outlines, and those that do not: lines drawn there and back. */
+export function outlinesOf(
+  loops: readonly Chain[],
+  sliver: number,
+): { readonly outlines: Outline[]; readonly flat: Chain[] } {
+  const outlines: Outline[] = [];
+  const flat: Chain[] = [];
+  for (const loop of loops) {
+    const outline = outlineOf(loop);
+    if (enclosesArea(outline, sliver)) outlines.push(outline);
+    else flat.push(loop);
+  }
+  return { outlines, flat };
 }
 
 /** The diameter where the outline is one full circle, drawn as one arc or as several about one centre. */

@@ -1,7 +1,7 @@
 import type { DrawnText } from "../drawing";
 import { flattenPath, interiorPoint, normaliseAngle, smallestRectangle } from "../geometry";
 import type { Kind } from "./congruence";
-import { pointInPolygon } from "./containment";
+import { pointInPolygon } from "./level-line";
 import { moved } from "./motion";
 import { isThrough, ROUND_SLACK } from "./operations";
 import { circleDiameter } from "./outline";

@@ -1,7 +1,8 @@
 import { curveLength, type Point, pathBox, pointAt } from "../geometry";
-import { nestOutlines, pointInPolygon } from "./containment";
+import { nestOutlines } from "./containment";
 import { findFrames, isCounterbore } from "./frames";
 import type { Chain } from "./joining";
+import { pointInPolygon } from "./level-line";
 import { counterboreFeature, engravedLine, featureOfOutline, type LayerReader } from "./operations";
 import type { Outline } from "./outline";
 import { OutlineIndex } from "./outline-index";

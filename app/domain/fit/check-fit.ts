@@ -1,0 +1,46 @@
+import { formatLength, formatMillimetres, type ShownUnit } from "../units";
+import { bridgedGap } from "./bridged-gap";
+import { doubledLines } from "./doubled-lines";
+import type { Finding, FitInput, FitRule, Severity } from "./finding";
+import { DEFAULT_LIMITS } from "./limits";
+import { openOutline } from "./open-outline";
+import { openingNarrowerThanTool } from "./opening-narrower-than-tool";
+import { partLargerThanSheet } from "./part-larger-than-sheet";
+import { partTooSmallToHold } from "./part-too-small-to-hold";
+import { pocketDeeperThanStock } from "./pocket-deeper-than-stock";
+import { pocketDepthUnknown } from "./pocket-depth-unknown";
+import { possibleFrame } from "./possible-frame";
+import { thinFloor } from "./thin-floor";
+import { unitImplausible } from "./unit-implausible";
+
+/** All rules by the code of what they find. */
+export const FIT_RULES: Readonly<Record<string, FitRule>> = {
+  "open-outline": openOutline,
+  "unit-implausible": unitImplausible,
+  "possible-frame": possibleFrame,
+  "part-larger-than-sheet": partLargerThanSheet,
+  "opening-narrower-than-tool": openingNarrowerThanTool,
+  "pocket-deeper-than-stock": pocketDeeperThanStock,
+  "thin-floor": thinFloor,
+  "pocket-depth-unknown": pocketDepthUnknown,
+  "part-too-small-to-hold": partTooSmallToHold,
+  "bridged-gap": bridgedGap,
+  "doubled-lines": doubledLines,
+};
+
+const ORDER: Readonly<Record<Severity, number>> = { stop: 0, ask: 1, note: 2 };
+
+/** Small lengths to a hundredth of a millimetre: gaps and floors are measured so. */
+const inWords = (length: number, shown: ShownUnit): string =>
+  shown === "mm" && length < 10 ? `${formatMillimetres(length, 2)}\u2009mm` : formatLength(length, shown);
+
+/** What would go wrong on the router with these parts in this stock: what stops first, then what is asked, then notes. */
+export function checkFit({ limits, shown = "mm", ...input }: FitInput): Finding[] {
+  const fit = {
+    ...input,
+    limits: { ...DEFAULT_LIMITS, ...limits },
+    say: (length: number) => inWords(length, shown),
+  };
+  const found = Object.values(FIT_RULES).flatMap((rule) => rule(fit));
+  return found.sort((one, other) => ORDER[one.severity] - ORDER[other.severity]);
+}

@@ -1,0 +1,4 @@
+/** What would go wrong on the router or at assembly, each with its place, its measure and its limit. */
+export { checkFit, FIT_RULES } from "./check-fit";
+export type { Finding, FitInput, FitStock, Severity } from "./finding";
+export { DEFAULT_LIMITS, type FitLimits } from "./limits";
