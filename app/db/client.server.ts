@@ -13,7 +13,7 @@ export function currentDatabase(): OpenDatabase {
 }
 
 /** Puts another open database in place of the environment's, for tests; the caller closes it. */
-export function useDatabase(database: OpenDatabase): void {
+export function putDatabase(database: OpenDatabase): void {
   shelf.kerfpostDatabase = database;
 }
 

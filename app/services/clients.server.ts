@@ -15,7 +15,7 @@ export interface Clients {
 const shelf = globalThis as { kerfpostClients?: Partial<Clients> };
 
 /** Puts other clients in place of the environment's, for tests; the caller closes them. */
-export function useClients(clients: Clients | undefined): void {
+export function putClients(clients: Clients | undefined): void {
   if (clients) shelf.kerfpostClients = clients;
   else delete shelf.kerfpostClients;
 }

@@ -3,7 +3,7 @@ import { tmpdir } from "node:os";
 import path from "node:path";
 import { sql } from "drizzle-orm";
 import { afterAll, beforeAll } from "vitest";
-import { closeDatabase, currentDatabase, db, useDatabase } from "~/db/client.server";
+import { closeDatabase, currentDatabase, db, putDatabase } from "~/db/client.server";
 import { migrateDatabase } from "~/db/migrate.server";
 import { openDatabase } from "~/db/open.server";
 
@@ -14,7 +14,7 @@ import { openDatabase } from "~/db/open.server";
 export function freshDatabase(): void {
   const directory = mkdtempSync(path.join(tmpdir(), "kerfpost-database-"));
   beforeAll(async () => {
-    useDatabase(openDatabase(`file:${path.join(directory, "test.db")}`));
+    putDatabase(openDatabase(`file:${path.join(directory, "test.db")}`));
     await migrateDatabase(currentDatabase());
   });
   afterAll(() => {
