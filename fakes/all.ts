@@ -33,6 +33,9 @@ export interface FakesOptions {
   /** Where payment events go. */
   webhookUrl?: string | undefined;
   webhookSecret?: string | undefined;
+  /** Keys the callers use; the defaults are those of the application's own settings. */
+  paymentsKey?: string | undefined;
+  carrierKey?: string | undefined;
   /** Milliseconds before each further attempt at a payment event that was not taken. */
   retryDelays?: number[] | undefined;
 }
@@ -55,12 +58,13 @@ export async function startFakes(options: FakesOptions): Promise<Fakes> {
     startPayments({
       port: ports.payments,
       dataDirectory,
+      secretKey: options.paymentsKey,
       webhookUrl: options.webhookUrl,
       webhookSecret: options.webhookSecret,
       retryDelays: options.retryDelays,
     }),
     startMail({ port: ports.smtp, inboxPort: ports.inbox, dataDirectory }),
-    startCarrier({ port: ports.carrier, dataDirectory }),
+    startCarrier({ port: ports.carrier, dataDirectory, key: options.carrierKey }),
   ]);
   const [storage, payments, mail, carrier] = started;
   if (

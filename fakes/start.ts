@@ -1,6 +1,12 @@
-/** Starts all fakes from a terminal, prints where they are and stops them on SIGINT or SIGTERM. */
+/**
+ * Starts all fakes from a terminal, prints where they are and stops them on SIGINT or SIGTERM. Keys and secrets are
+ * those the application is set to use.
+ */
+import { existsSync } from "node:fs";
 import { z } from "zod";
 import { FAKE_PORTS, startFakes } from "./all";
+
+if (existsSync(".env")) process.loadEnvFile(".env");
 
 const port = (standard: number) => z.coerce.number().int().min(0).max(65_535).default(standard);
 
@@ -12,10 +18,15 @@ const environment = z
     FAKE_INBOX_PORT: port(FAKE_PORTS.inbox),
     FAKE_CARRIER_PORT: port(FAKE_PORTS.carrier),
     FAKE_DATA_DIRECTORY: z.string().default(".data/fakes"),
-    FAKE_WEBHOOK_URL: z.url().default("http://127.0.0.1:4700/webhooks/payments"),
-    FAKE_WEBHOOK_SECRET: z.string().optional(),
+    FAKE_WEBHOOK_URL: z.url().optional(),
+    PORT: port(4700),
+    STRIPE_SECRET_KEY: z.string().optional(),
+    STRIPE_WEBHOOK_SECRET: z.string().optional(),
+    CARRIER_KEY: z.string().optional(),
   })
   .parse(process.env);
+
+const webhookUrl = environment.FAKE_WEBHOOK_URL ?? `http://127.0.0.1:${environment.PORT}/webhooks/payments`;
 
 const fakes = await startFakes({
   ports: {
@@ -26,8 +37,10 @@ const fakes = await startFakes({
     carrier: environment.FAKE_CARRIER_PORT,
   },
   dataDirectory: environment.FAKE_DATA_DIRECTORY,
-  webhookUrl: environment.FAKE_WEBHOOK_URL,
-  webhookSecret: environment.FAKE_WEBHOOK_SECRET,
+  webhookUrl,
+  webhookSecret: environment.STRIPE_WEBHOOK_SECRET,
+  paymentsKey: environment.STRIPE_SECRET_KEY,
+  carrierKey: environment.CARRIER_KEY,
 }).catch((error: NodeJS.ErrnoException & { port?: number }) => {
   if (error.code !== "EADDRINUSE") throw error;
   console.error(`Port ${error.port} is taken: are the local stand-ins running already?`);
@@ -37,7 +50,7 @@ const fakes = await startFakes({
 process.stdout.write(
   `Local stand-ins, kept in ${environment.FAKE_DATA_DIRECTORY}:
   storage   ${fakes.storage.url}
-  payments  ${fakes.payments.url}  (events to ${environment.FAKE_WEBHOOK_URL})
+  payments  ${fakes.payments.url}  (events to ${webhookUrl})
   mail      ${fakes.mail.smtpUrl}
   inbox     ${fakes.mail.url}
   carrier   ${fakes.carrier.url}

@@ -4,8 +4,12 @@ import { mkdtemp, rm } from "node:fs/promises";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { afterEach, beforeEach, describe, expect, it } from "vitest";
-import { FREE_PORTS, startFakes } from "~fakes/all";
+import { readEnvironment } from "~/server/environment.server";
+import { FAKE_PORTS, FREE_PORTS, startFakes } from "~fakes/all";
+import { CARRIER_KEY } from "~fakes/carrier";
 import { listen, sendJson } from "~fakes/local-server";
+import { PAYMENTS_SECRET_KEY, PAYMENTS_WEBHOOK_SECRET } from "~fakes/payments";
+import { STORAGE_ACCESS_KEY, STORAGE_BUCKET } from "~fakes/storage";
 import { servicesFor } from "../../support/fakes";
 
 let dataDirectory: string;
@@ -51,6 +55,21 @@ describe("all stand-ins together", () => {
     after.close();
     await second.stop();
     expect(second.unexpected()).toEqual([]);
+  });
+
+  it("hold by the keys and addresses that the application uses unless told otherwise", async () => {
+    const settings = readEnvironment({});
+    expect(settings).toMatchObject({
+      S3_ENDPOINT: `http://127.0.0.1:${FAKE_PORTS.storage}`,
+      S3_BUCKET: STORAGE_BUCKET,
+      S3_ACCESS_KEY_ID: STORAGE_ACCESS_KEY,
+      STRIPE_API_URL: `http://127.0.0.1:${FAKE_PORTS.payments}`,
+      STRIPE_SECRET_KEY: PAYMENTS_SECRET_KEY,
+      STRIPE_WEBHOOK_SECRET: PAYMENTS_WEBHOOK_SECRET,
+      SMTP_URL: `smtp://127.0.0.1:${FAKE_PORTS.smtp}`,
+      CARRIER_URL: `http://127.0.0.1:${FAKE_PORTS.carrier}`,
+      CARRIER_KEY,
+    });
   });
 
   it("do not start by halves when a port is taken", async () => {
