@@ -26,7 +26,7 @@ import {
 import { labelBody, ratesBody } from "./requests";
 import { measure, rate, refusalOf, SERVICES, zoneBetween } from "./tariff";
 
-export const CARRIER_KEY = "carrier_test_kerfpost";
+export const CARRIER_KEY = "towpath_local_key";
 
 export type ParcelStatus =
   | "label-made"

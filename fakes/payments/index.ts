@@ -28,8 +28,8 @@ import { WebhookSender, type WebhookTarget } from "./webhooks";
 
 export { signatureHeader } from "./webhooks";
 
-export const PAYMENTS_SECRET_KEY = "sk_test_kerfpost";
-export const PAYMENTS_WEBHOOK_SECRET = "whsec_kerfpost";
+export const PAYMENTS_SECRET_KEY = "sk_test_kerfpost_local";
+export const PAYMENTS_WEBHOOK_SECRET = "whsec_kerfpost_local";
 const API_VERSION = "2026-10-28.endive";
 
 export interface PaymentsFakeOptions extends ListenOptions {
