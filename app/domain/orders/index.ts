@@ -1,3 +1,4 @@
+export { ACCESS, ACTS, type Act, mayDo } from "./access";
 export { type InterpretedFile, interpretFiles, type LayerChoice } from "./default-interpretation";
 export {
   type FileInterpretation,
@@ -10,6 +11,17 @@ export {
   type Sanding,
   sandingSchema,
 } from "./interpretation";
+export {
+  checkMove,
+  MOVE_NAMES,
+  MOVES,
+  type MoveName,
+  type MoveVerdict,
+  type Need,
+  type OrderFacts,
+  STEP_BACK,
+} from "./moves";
+export { allReached, type PieceFacts, progressOf, stageFromPieces } from "./pieces";
 export { isRole, ROLES, type Role, STAFF_ROLES } from "./role";
 export { type ShopSettings, shopSettingsSchema } from "./settings";
 export { type ShipTo, shipToSchema } from "./ship-to";
