@@ -11,7 +11,7 @@ const NEARLY_CLOSED_SHARE = 0.05;
 export const openOutline: FitRule = (fit) => {
   const { nearlyClosedGap, mostOpenListed } = fit.limits;
   const isNear = ({ gap, length, curves }: OpenChain) =>
-    curves.length > 1 && gap <= nearlyClosedGap && gap <= NEARLY_CLOSED_SHARE * length;
+    curves.length > 1 && gap > 0 && gap <= nearlyClosedGap && gap <= NEARLY_CLOSED_SHARE * length;
   const loose = new Map<string, OpenChain[]>();
   for (const chain of fit.report.open) {
     if (!isNear(chain)) loose.set(chain.layer, [...(loose.get(chain.layer) ?? []), chain]);

@@ -21,6 +21,13 @@ export const openingNarrowerThanTool: FitRule = (fit) =>
     }),
   );
 
+/** A polygon of six even sides or more fills this share of the circle of its length. */
+const ROUND_SHARE = 0.9;
+
+/** A circle drawn as short lines, as some programs write it. */
+const isFacetedCircle = ({ area, length }: Feature): boolean =>
+  length > 0 && (4 * Math.PI * area) / (length * length) >= ROUND_SHARE;
+
 function check(part: Part, feature: Feature, { tools, limits, say }: FitCase): Finding | null {
   const tool = tools.smallestDiameter;
   const limit = tool + limits.toolClearance;
@@ -28,9 +35,9 @@ function check(part: Part, feature: Feature, { tools, limits, say }: FitCase): F
   if (feature.length > 0 && (2 * feature.area) / feature.length >= limit) return null;
   const width = feature.diameter ?? inscribedWidth(flattenPath(feature.path, CHORD), WIDTH_TOLERANCE);
   if (width >= limit - WIDTH_TOLERANCE) return null;
+  const isRound = feature.diameter !== null || isFacetedCircle(feature);
   const isEntered = width >= tool - WIDTH_TOLERANCE;
-  const where = `${feature.kind === "pocket" ? "A pocket" : feature.diameter ? "A hole" : "An opening"} in part ${part.name} is ${say(width)} wide`;
-  const isRound = feature.diameter !== null;
+  const where = `${feature.kind === "pocket" ? "A pocket" : isRound ? "A hole" : "An opening"} in part ${part.name} is ${say(width)} wide`;
   return {
     code: "opening-narrower-than-tool",
     severity: isEntered || isRound ? "ask" : "stop",

@@ -1,4 +1,4 @@
-import { cross, distance, dot, type Point, subtract } from "../geometry";
+import { boxExtent, cross, distance, dot, type Point, subtract } from "../geometry";
 import type { Nesting } from "./containment";
 import { circleDiameter, type Outline } from "./outline";
 
@@ -18,6 +18,8 @@ const FRAME_LAYER =
   /(^|[^A-Z])(BORDERS?|SHEETS?|SHEET ?SIZE|SHEET ?BORDER|STOCK|PAGE|TITLE ?BLOCK|BOUNDING ?BOX)([^A-Z]|$)/;
 /** Two circles about one centre of which the larger is at most this wide are a countersunk or counterbored hole, not a part with a hole. */
 export const WIDEST_COUNTERBORE = 20;
+/** Outlines this small that hold others are lettering or countersunk holes, no sign of a frame round parts. */
+const SMALLEST_HELD = 20;
 const CONCENTRIC = 0.05;
 
 const layerIsFrame = (layer: string): boolean => FRAME_LAYER.test(layer.toUpperCase().replaceAll("_", " "));
@@ -67,7 +69,7 @@ const isSheet = ({ long, short }: { readonly long: number; readonly short: numbe
 
 /**
  * Places of the outlines that are frames: rectangles that contain others and (a) have a known sheet size, or
- * (b) hold a frame and nothing else, or (c) hold at least two outlines that themselves hold some, or (d) lie on
+ * (b) hold a frame and nothing else, or (c) hold at least two outlines, larger than lettering, that themselves hold some, or (d) lie on
  * a layer named as a border or sheet.
  */
 export function findFrames(outlines: readonly Outline[], nesting: Nesting): Set<number> {
@@ -85,10 +87,9 @@ export function findFrames(outlines: readonly Outline[], nesting: Nesting): Set<
     const sides = rectangleSides(outlines[place], 0.01);
     if (!sides) continue;
     const held = children.get(place) ?? [];
-    const holders = held.filter((child) => {
-      const inner = children.get(child);
-      return inner && !isCounterbore(outlines, child, inner);
-    });
+    const holders = held.filter(
+      (child) => children.has(child) && boxExtent(outlines[child].box) > SMALLEST_HELD,
+    );
     const holdsOneFrame = held.length === 1 && frames.has(held[0]);
     if (isSheet(sides) || holdsOneFrame || holders.length >= 2 || layerIsFrame(outlines[place].layer))
       frames.add(place);

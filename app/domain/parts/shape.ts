@@ -1,4 +1,12 @@
-import { distance, flattenPath, interpolate, type Path, type Point, polygonCentroid } from "../geometry";
+import {
+  distance,
+  flattenPath,
+  interpolate,
+  type Path,
+  type Point,
+  polygonArea,
+  polygonCentroid,
+} from "../geometry";
 import { ROUND_SLACK } from "./operations";
 import { circleDiameter } from "./outline";
 import type { Feature } from "./part";
@@ -13,6 +21,8 @@ const CREST = 0.02;
 const LOWER_PEAK = 0.15;
 /** Chords longer than this, millimetres, are probed in the middle as well. */
 const LONG_CHORD = 1;
+/** Outlines that enclose less, since they cross themselves, have no centre of area to speak of. Square millimetres. */
+const LEAST_AREA = 1e-3;
 const MOST_ANCHORS = 360;
 
 /** One outline or line, ready to be compared. */
@@ -77,7 +87,8 @@ function ringOf(path: Path, byArea: boolean): Ring {
     return { centre: first.centre, radius: diameter / 2, chords: new SegmentIndex([], true), probes: [] };
   }
   const points = flattenPath(path, CHORD);
-  const centre = byArea ? polygonCentroid(points) : centreOfChords(points, path.closed);
+  const isFilled = byArea && Math.abs(polygonArea(points)) > LEAST_AREA;
+  const centre = isFilled ? polygonCentroid(points) : centreOfChords(points, path.closed);
   return {
     centre,
     radius: null,
