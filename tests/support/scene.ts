@@ -112,7 +112,14 @@ export const PRICE_BOOK: PriceBook = {
   secondsPerTab: 12,
   sanding: { none: 0, arrises: 20, "grit-150": 45 },
   packing: { perOrder: 900, perPiece: 75 },
-  freight: { perParcel: 1_200, perKilogram: 95, maxParcelKilograms: 30 },
+  freight: {
+    perParcel: 1_200,
+    perKilogram: 95,
+    maxParcelKilograms: 30,
+    perPallet: 14_500,
+    palletPerKilogram: 60,
+    maxPalletKilograms: 900,
+  },
   minimumOrder: 6_000,
 };
 

@@ -6,5 +6,5 @@ export default async function trouble(
   if (how === "throw") throw new Error("thrown on purpose");
   if (how === "exit") process.exit(3);
   const kept: object[][] = [];
-  for (;;) if (how === "devour") kept.push(new Array(1_000_000).fill({}));
+  for (;;) if (how === "devour") kept.push(new Array(8_000_000).fill({}));
 }
