@@ -38,7 +38,7 @@ export function AppShell({ nav, who, children, width = "full" }: AppShellProps) 
       >
         To the page
       </a>
-      <header className="gutter flex items-start justify-between gap-6 py-3 print:hidden">
+      <header className="gutter flex items-center justify-between gap-6 py-2 md:items-start md:py-3 print:hidden">
         <div className="flex min-w-0 items-center gap-7">
           <Link to="/" className="rounded-sheet py-1" aria-label="Kerfpost, first page">
             <Wordmark />

@@ -4,6 +4,7 @@ import {
   type MouseEvent,
   type PointerEvent,
   useId,
+  useMemo,
   useRef,
   useState,
 } from "react";
@@ -17,7 +18,7 @@ import { PlacedPin } from "./placed-pin";
 import { ScaleBar } from "./scale-bar";
 import { useView } from "./use-view";
 import { toScreen, viewShowing } from "./view";
-import type { ViewGeometry, ViewPin } from "./view-geometry";
+import type { ViewBox, ViewGeometry, ViewPin } from "./view-geometry";
 import { type ViewerMode, ViewerToolbar } from "./viewer-toolbar";
 
 interface DrawingViewerProps {
@@ -40,7 +41,7 @@ interface DrawingViewerProps {
 const PARTS_ONLY: readonly ViewerMode[] = [{ id: "parts", label: "Parts" }];
 const NO_PINS: readonly ViewPin[] = [];
 const HEIGHT = {
-  page: "h-[62dvh] min-h-80 lg:h-[70dvh] print:h-[120mm]",
+  page: "h-[46dvh] min-h-72 md:h-[62dvh] lg:h-[70dvh] print:h-[120mm]",
   small: "h-72 print:h-[80mm]",
 };
 
@@ -74,6 +75,8 @@ export function DrawingViewer({
   const pane = useView(svg, asideShown ? geometry.fullExtents : geometry.extents);
   const { view, size } = pane;
   const chosen = geometry.parts.find((part) => part.id === selected);
+
+  const others = useMemo(() => boxesBeside(geometry, selected), [geometry, selected]);
 
   const changeMeasuring = (on: boolean) => {
     setMeasuring(on);
@@ -218,8 +221,17 @@ export function DrawingViewer({
           />
         </g>
         <OpenEnds ends={geometry.open.ends.map((end) => toScreen(view, end))} />
-        <PartLabels parts={geometry.parts} view={view} size={size} chosen={selected} lit={hovered} />
-        {chosen && !measuring && <DimensionLines box={chosen.copies[0].box} view={view} unit={unit} />}
+        <PartLabels
+          parts={geometry.parts}
+          pins={pins}
+          view={view}
+          size={size}
+          chosen={selected}
+          lit={hovered}
+        />
+        {chosen && !measuring && (
+          <DimensionLines box={chosen.copies[0].box} others={others} view={view} size={size} unit={unit} />
+        )}
         {pins.map((pin) => (
           <PlacedPin key={pin.number} pin={pin} view={view} onPin={onPin} />
         ))}
@@ -230,6 +242,13 @@ export function DrawingViewer({
         {done}
       </p>
     </div>
+  );
+}
+
+/** Boxes of every copy but the first of the chosen part, which is the one that is measured. */
+function boxesBeside(geometry: ViewGeometry, selected: string | null): ViewBox[] {
+  return geometry.parts.flatMap((part) =>
+    part.copies.filter((_, index) => part.id !== selected || index > 0).map((copy) => copy.box),
   );
 }
 

@@ -44,7 +44,11 @@ interface MeasureLineProps {
 export function MeasureLine({ points, hover, view, unit }: MeasureLineProps) {
   const from = points[0];
   const to = points[1] ?? hover;
-  const marks = points.length === 2 || !hover ? points : [...points, hover];
+  const marks = [
+    { role: "from", held: from },
+    { role: "to", held: points[1] },
+    { role: "pointer", held: points.length === 2 ? null : hover },
+  ];
   const [x1, y1] = from ? toScreen(view, from.at) : [0, 0];
   const [x2, y2] = to ? toScreen(view, to.at) : [0, 0];
   return (
@@ -64,17 +68,18 @@ export function MeasureLine({ points, hover, view, unit }: MeasureLineProps) {
           </text>
         </>
       )}
-      {marks.map((mark) => {
-        const [x, y] = toScreen(view, mark.at);
+      {marks.map(({ role, held }) => {
+        if (!held) return null;
+        const [x, y] = toScreen(view, held.at);
         return (
-          <g key={`${mark.at[0]} ${mark.at[1]}`} className="stroke-blue" strokeWidth="1.4">
+          <g key={role} className="stroke-blue" strokeWidth="1.4">
             <circle
               cx={x}
               cy={y}
-              r={mark.exact ? 4 : 2}
-              className={mark.exact ? "fill-sheet" : "fill-blue"}
+              r={held.exact ? 4 : 2}
+              className={held.exact ? "fill-sheet" : "fill-blue"}
             />
-            {mark.exact && <path d={`M${x - 8} ${y}h16M${x} ${y - 8}v16`} strokeWidth="0.8" />}
+            {held.exact && <path d={`M${x - 8} ${y}h16M${x} ${y - 8}v16`} strokeWidth="0.8" />}
           </g>
         );
       })}

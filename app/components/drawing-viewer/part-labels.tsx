@@ -1,9 +1,10 @@
 import { memo, useMemo } from "react";
 import { type Size, toScreen, type View } from "./view";
-import type { ViewPart } from "./view-geometry";
+import type { Spot, ViewPart, ViewPin } from "./view-geometry";
 
 interface PartLabelsProps {
   readonly parts: readonly ViewPart[];
+  readonly pins: readonly ViewPin[];
   readonly view: View;
   readonly size: Size;
   readonly chosen: string | null;
@@ -23,10 +24,23 @@ interface Placed {
 const CHARACTER = 7.3;
 const LINE = 14;
 const INSET = { x: 7, y: 4 };
+/** How far down a label may go to stand clear of a pin, in pixels. */
+const SHIFTS = [0, 10, 20, 30];
+const PIN = 21;
 
 /** Letters in the parts' corners and depths in their pockets. A label that has no room, or would stand on another, is left out. */
-export const PartLabels = memo(function PartLabels({ parts, view, size, chosen, lit }: PartLabelsProps) {
-  const labels = useMemo(() => placedLabels(parts, view, size, chosen), [parts, view, size, chosen]);
+export const PartLabels = memo(function PartLabels({
+  parts,
+  pins,
+  view,
+  size,
+  chosen,
+  lit,
+}: PartLabelsProps) {
+  const labels = useMemo(
+    () => placedLabels(parts, pins, view, size, chosen),
+    [parts, pins, view, size, chosen],
+  );
   const words = useMemo(() => placedWords(parts, view, size), [parts, view, size]);
   return (
     <svg aria-hidden="true" className="pointer-events-none font-mono">
@@ -57,24 +71,29 @@ export const PartLabels = memo(function PartLabels({ parts, view, size, chosen, 
   );
 });
 
-function placedLabels(parts: readonly ViewPart[], view: View, size: Size, chosen: string | null): Placed[] {
+function placedLabels(
+  parts: readonly ViewPart[],
+  pins: readonly ViewPin[],
+  view: View,
+  size: Size,
+  chosen: string | null,
+): Placed[] {
   const placed: Placed[] = [];
+  const taken = pins.map((pin) => toScreen(view, pin.at));
   const first = [...parts].sort((one, other) => Number(other.id === chosen) - Number(one.id === chosen));
   for (const part of first) {
     for (const [index, copy] of part.copies.entries()) {
       const [left, top] = toScreen(view, copy.labelAt);
-      const label: Placed = {
-        key: `${part.id} ${index}`,
-        part: part.id,
-        text: copy.label,
-        x: left + INSET.x,
-        y: top + INSET.y,
-        width: copy.label.length * CHARACTER,
-      };
+      const width = copy.label.length * CHARACTER;
       const wide = (copy.box.maxX - copy.box.minX) * view.scale;
-      const high = (copy.box.maxY - copy.box.minY) * view.scale;
-      const fits = wide >= label.width + 2 * INSET.x && high >= LINE + 2 * INSET.y;
-      if (fits && inWindow(label, size) && !placed.some((other) => overlap(label, other))) placed.push(label);
+      const foot = view.y - copy.box.minY * view.scale;
+      if (wide < width + 2 * INSET.x) continue;
+      const tried = { key: `${part.id} ${index}`, part: part.id, text: copy.label, x: left + INSET.x, width };
+      const clear = SHIFTS.map((shift): Placed => ({ ...tried, y: top + INSET.y + shift })).find(
+        (label) => label.y + LINE <= foot && !taken.some((pin) => underPin(label, pin)),
+      );
+      if (clear && inWindow(clear, size) && !placed.some((other) => overlap(clear, other)))
+        placed.push(clear);
     }
   }
   return placed;
@@ -100,6 +119,10 @@ function placedWords(parts: readonly ViewPart[], view: View, size: Size): Placed
 
 const inWindow = (label: Placed, size: Size): boolean =>
   label.x > -label.width && label.x < size.width && label.y > -LINE && label.y < size.height;
+
+/** A pin stands up and to the right of its point. */
+const underPin = (label: Placed, [x, y]: Spot): boolean =>
+  label.x < x + PIN && x < label.x + label.width && label.y < y && y - PIN < label.y + LINE;
 
 const overlap = (one: Placed, other: Placed): boolean =>
   one.x < other.x + other.width + 4 &&

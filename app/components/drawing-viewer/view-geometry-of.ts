@@ -31,7 +31,8 @@ import type {
 
 /** A reading as the viewer shows it. All of it is plain JSON, so a loader can return it. */
 export function viewGeometryOf(report: PartsReport): ViewGeometry {
-  const parts = report.parts.map(viewPartOf).sort((one, other) => areaOf(other.box) - areaOf(one.box));
+  const byExtent = [...report.parts].sort((one, other) => areaOf(other.box) - areaOf(one.box));
+  const parts = byExtent.map(viewPartOf);
   const openPaths = report.open.map((chain): Path => ({ curves: chain.curves, closed: false }));
   const setAside = report.setAside.filter((group) => group.paths.length > 0);
   const extents = unionOf([...parts.map((part) => part.box), ...openPaths.map(pathBox)]);
