@@ -4,9 +4,12 @@ import type { ReactNode } from "react";
 import { Links, Meta, Outlet, Scripts, ScrollRestoration, useRouteLoaderData } from "react-router";
 import type { Route } from "./+types/root";
 import "./app.css";
+import { sessionMiddleware } from "./auth/session.server";
 import { AppShell } from "./components/app-shell";
 import { ErrorPanel } from "./components/error-panel";
 import { QueryProvider } from "./components/query-provider";
+
+export const middleware: Route.MiddlewareFunction[] = [sessionMiddleware];
 
 export const links: Route.LinksFunction = () =>
   [publicSans, robotoMono].map((href) => ({

@@ -1,0 +1,18 @@
+import { index, layout, prefix, type RouteConfig, route } from "@react-router/dev/routes";
+
+/** The URL map. One block an area; a page lies in `routes/<area>/<page>.tsx`. */
+export default [
+  layout("routes/public/layout.tsx", [index("routes/public/home.tsx")]),
+
+  ...prefix("api", [
+    route("uploads", "routes/api/uploads.ts"),
+    ...prefix("orders/:orderId", [
+      route("price", "routes/api/price.ts"),
+      route("events", "routes/api/events.ts"),
+      route("geometry/:key", "routes/api/geometry.ts"),
+      route("drawings/:drawingId", "routes/api/drawing.ts"),
+    ]),
+  ]),
+
+  route("webhooks/payments", "routes/webhooks/payments.ts"),
+] satisfies RouteConfig;
