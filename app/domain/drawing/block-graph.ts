@@ -4,7 +4,7 @@ import type { NormalEntity } from "./normal-entity";
 /** An entity with what it came to. */
 export interface Item {
   readonly entity: NormalEntity;
-  readonly content: EntityContent | null;
+  readonly content: EntityContent;
 }
 
 export interface BlockItems {
@@ -27,13 +27,13 @@ export const blockKey = (name: string): string => name.toLowerCase();
 
 /** The key of the block an item places, or null. */
 const placedKey = ({ entity, content }: Item): string | null =>
-  content?.kind === "insert" ? blockKey(entity.block ?? "") : null;
+  content.kind === "insert" ? blockKey(entity.block ?? "") : null;
 
 /** Curves and other things that placing an item comes to, the placing itself counted as one. */
 export function itemWeight(item: Item, blocks: ReadonlyMap<string, WeighedBlock>): number {
   const { content } = item;
-  if (content?.kind === "path") return content.path.curves.length;
-  if (content?.kind !== "insert") return 1;
+  if (content.kind === "path") return content.path.curves.length;
+  if (content.kind !== "insert") return 1;
   const block = blocks.get(blockKey(item.entity.block ?? ""));
   return 1 + (block ? Math.max(1, block.weight) * content.insert.columns * content.insert.rows : 0);
 }

@@ -36,15 +36,15 @@ const point = (numbers: GroupNumbers, code: number): Point => ({
   y: numbers.first(code + 10, 0),
 });
 
-/** Whether heights vary no more than the flat slope allows over a thing of this extent. */
-export function isFlat(heights: readonly number[], points: readonly Point[]): boolean {
-  let low = Infinity;
-  let high = -Infinity;
+/** Whether heights, absent ones zero, vary no more than the flat slope allows over a thing of this extent. */
+function isFlat(heights: readonly number[], points: readonly Point[]): boolean {
+  if (heights.length === 0) return true;
+  let low = heights.length < points.length ? 0 : Infinity;
+  let high = heights.length < points.length ? 0 : -Infinity;
   for (const z of heights) {
     low = Math.min(low, z);
     high = Math.max(high, z);
   }
-  if (!(high > low)) return true;
   const first = points[0];
   const reach = points.reduce((most, p) => Math.max(most, distance(first, p)), 0);
   return high - low <= FLAT_SLOPE * reach;

@@ -29,7 +29,10 @@ export interface DecodedText {
   readonly notes: readonly string[];
 }
 
-const isAscii = (bytes: Uint8Array): boolean => bytes.every((byte) => byte < 0x80);
+function isAscii(bytes: Uint8Array): boolean {
+  for (let i = 0; i < bytes.length; i++) if (bytes[i] >= 0x80) return false;
+  return true;
+}
 
 function decodeStrictly(bytes: Uint8Array, encoding: string): string | null {
   try {

@@ -34,6 +34,8 @@ export class GroupNumbers {
 
   /** Every value of a code. */
   all(code: number): number[] {
-    return this.#values.filter((_, index) => this.#codes[index] === code);
+    const found: number[] = [];
+    for (let i = 0; i < this.#codes.length; i++) if (this.#codes[i] === code) found.push(this.#values[i]);
+    return found;
   }
 }

@@ -61,9 +61,7 @@ export class Expansion {
       const size = Math.sqrt(Math.abs(affineDeterminant(standing.place)));
       this.texts.push({ text, at: affineApply(standing.place, at), height: height * size, layer });
     }
-    if (content === null) {
-      if (!("lines" in entity.body)) this.#ignore(entity.type, layer, entity.body.why);
-    } else if (content.kind === "refused") {
+    if (content.kind === "refused") {
       this.#ignore(entity.type, layer, content.why);
     } else if (content.kind === "path") {
       const isPlaced = standing.block !== null;

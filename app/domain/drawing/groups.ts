@@ -17,36 +17,59 @@ export interface RecordScan {
   ended: boolean;
 }
 
-/** Group codes run from -5 to 1071 (DXF Reference, group codes in numerical order). */
-const GROUP_CODE = /^-?\d{1,4}$/;
+/** Group codes run up to 1071 (DXF Reference, group codes in numerical order). */
 const HIGHEST_CODE = 1071;
 const COMMENT = 999;
 /** Names a record can have; anything else after a code 0 is damage. */
 const RECORD_TYPE = /^\w*[A-Za-z]\w*$/;
+
+const ZERO = 48;
+const NINE = 57;
+/** Blanks, tabs and carriage returns round a code. */
+const isBlank = (letter: number): boolean => letter === 32 || letter === 9 || letter === 13;
+
+type CodeLine = number | "blank" | "stray";
+
+/** The line from `from` to `to` as a group code, read in place. */
+function readCode(text: string, from: number, to: number): CodeLine {
+  let start = from;
+  let end = to;
+  while (start < end && isBlank(text.charCodeAt(start))) start++;
+  while (end > start && isBlank(text.charCodeAt(end - 1))) end--;
+  if (start === end) return "blank";
+  if (end - start > 4) return "stray";
+  let code = 0;
+  for (let i = start; i < end; i++) {
+    const letter = text.charCodeAt(i);
+    if (letter < ZERO || letter > NINE) return "stray";
+    code = code * 10 + letter - ZERO;
+  }
+  return code <= HIGHEST_CODE ? code : "stray";
+}
 
 /**
  * The records of a file up to its end mark, in one pass. Comments and blank lines between groups are dropped; where
  * code and value lines are out of step, lines are passed over until a code is met. A last line without a line break
  * in a file without an end mark may be half a number, so it is left out.
  */
-export function* scanRecords(text: string, scan: RecordScan): Generator<GroupRecord> {
-  const lines = text.split(/\r\n|\n|\r/);
-  const lastLine = lines.length - 1;
+export function* scanRecords(source: string, scan: RecordScan): Generator<GroupRecord> {
+  const text = /\r(?!\n)/.test(source) ? source.replace(/\r\n?/g, "\n") : source;
   let type: string | null = null;
   let groups: Group[] = [];
   let at = 0;
-  while (at < lastLine) {
-    const codeText = lines[at].trim();
-    const code = GROUP_CODE.test(codeText) ? Number(codeText) : Number.NaN;
-    if (!(code <= HIGHEST_CODE)) {
-      if (codeText !== "") scan.strayLines++;
-      at++;
+  for (;;) {
+    const codeEnd = text.indexOf("\n", at);
+    if (codeEnd < 0) break;
+    const code = readCode(text, at, codeEnd);
+    at = codeEnd + 1;
+    if (typeof code === "string") {
+      if (code === "stray") scan.strayLines++;
       continue;
     }
-    const value = lines[at + 1].trim();
-    const isCut = at + 1 === lastLine && value !== "EOF";
-    at += 2;
-    if (isCut) break;
+    const lineBreak = text.indexOf("\n", at);
+    const value = text.slice(at, lineBreak < 0 ? undefined : lineBreak).trim();
+    if (lineBreak < 0 && value !== "EOF") break;
+    at = lineBreak < 0 ? text.length : lineBreak + 1;
     if (code === COMMENT) continue;
     if (code !== 0) {
       if (type !== null) groups.push({ code, value });

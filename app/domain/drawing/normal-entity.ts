@@ -1,6 +1,6 @@
 import type { IgnoredReason } from "./drawing";
 import { firstInteger, firstValue, type Group, type GroupRecord } from "./groups";
-import { readNumber } from "./numbers";
+import { isPlainNumber, readNumber } from "./numbers";
 import { unescapeCharacters } from "./strings";
 
 /** An entity as the file has it, with the records that belong to it: vertices of a POLYLINE, attributes of an INSERT. */
@@ -10,7 +10,7 @@ export interface RawEntity {
   readonly members: readonly GroupRecord[];
 }
 
-/** An entity brought into an order and spelling that the parser takes: lines of DXF, or why there are none. */
+/** What is kept of an entity beside its curves. */
 export interface NormalEntity {
   readonly type: string;
   readonly layer: string;
@@ -18,10 +18,9 @@ export interface NormalEntity {
   readonly invisible: boolean;
   /** Name of the block an INSERT places. */
   readonly block: string | null;
-  readonly body: { readonly lines: readonly string[] } | { readonly why: IgnoredReason };
   /** Numbers were rewritten (decimal comma, exponent letter D). */
   readonly mended: boolean;
-  /** Kept for texts only: everything else is in the body. */
+  /** Kept for texts only. */
   readonly raw: RawEntity | null;
 }
 
@@ -37,20 +36,19 @@ const form = (required: readonly number[], optional: readonly number[]): EntityF
   wanted: new Set([...required, ...optional]),
 });
 
+const POLYLINE_HEAD = form([], EXTRUSION);
+
 const FORMS: ReadonlyMap<string, EntityForm> = new Map([
   ["LINE", form([10, 20, 11, 21], [30, 31])],
   ["CIRCLE", form([10, 20, 40], EXTRUSION)],
   ["ARC", form([10, 20, 40, 50, 51], EXTRUSION)],
   ["ELLIPSE", form([10, 20, 11, 21, 40], [31, 41, 42, ...EXTRUSION])],
   ["LWPOLYLINE", form([10, 20], [42, ...EXTRUSION])],
-  ["POLYLINE", form([], EXTRUSION)],
+  ["POLYLINE", POLYLINE_HEAD],
   ["SPLINE", form([71], [70, 40, 41, 10, 20, 30, 11, 21, 31, 12, 22, 13, 23])],
   ["INSERT", form([10, 20], [41, 42, 50, 70, 71, 44, 45, ...EXTRUSION])],
 ]);
 const VERTEX = form([10, 20], [30, 42]);
-
-/** Types read as curves, or expanded into them. */
-export const READABLE_TYPES: readonly string[] = [...FORMS.keys()];
 
 /** TEXT-like types whose strings are kept. */
 export const TEXT_TYPES: ReadonlySet<string> = new Set(["TEXT", "MTEXT", "ATTRIB"]);
@@ -58,37 +56,43 @@ export const TEXT_TYPES: ReadonlySet<string> = new Set(["TEXT", "MTEXT", "ATTRIB
 /** Groups from here on are another object's (embedded, from the 2018 format on) or a program's own data. */
 const endsOwnGroups = (code: number): boolean => code === 101 || code >= 1000;
 
+/** Heights, nearly always zero: those are left out, and an absent height is zero. */
+const HEIGHTS: ReadonlySet<number> = new Set([30, 31]);
+
 /** Bits of POLYLINE and VERTEX code 70. */
 const CLOSED = 1;
+const WORLD = 8;
 const MESH = 16 | 64;
 const FRAME_VERTEX = 16;
 
-/** Collects checked lines; a number that is none makes the whole entity damaged. */
+/** Writes checked lines; a number that is none makes the whole entity damaged. */
 class Body {
-  readonly lines: string[] = [];
+  readonly lines: string[];
   damaged = false;
   mended = false;
 
+  constructor(lines: string[]) {
+    this.lines = lines;
+  }
+
   push(code: number, text: string): void {
-    const number = readNumber(text);
-    if (number === null) {
-      this.damaged = true;
+    if (isPlainNumber(text)) {
+      this.lines.push(String(code), text);
       return;
     }
-    if (number.mended) this.mended = true;
-    this.lines.push(String(code), number.mended ? String(number.value) : text);
+    const number = readNumber(text);
+    if (number === null) this.damaged = true;
+    else this.lines.push(String(code), String(number));
+    this.mended = true;
   }
 
   /** Every wanted group, in the file's order. False where a required one is missing. */
   pushWanted(groups: readonly Group[], { required, wanted }: EntityForm): boolean {
-    const seen = new Set<number>();
     for (const { code, value } of groups) {
       if (endsOwnGroups(code)) break;
-      if (!wanted.has(code)) continue;
-      seen.add(code);
-      this.push(code, value);
+      if (wanted.has(code) && !(HEIGHTS.has(code) && Number(value) === 0)) this.push(code, value);
     }
-    return required.every((code) => seen.has(code));
+    return required.every((code) => groups.some((group) => group.code === code));
   }
 }
 
@@ -113,7 +117,7 @@ function pushLightVertices(body: Body, entity: RawEntity, isCut: boolean): boole
 }
 
 function pushOldVertices(body: Body, entity: RawEntity, isCut: boolean): boolean {
-  body.pushWanted(entity.groups, FORMS.get("POLYLINE") ?? VERTEX);
+  body.pushWanted(entity.groups, POLYLINE_HEAD);
   let vertices = 0;
   let bulges = 0;
   for (const [index, member] of entity.members.entries()) {
@@ -130,38 +134,56 @@ function pushOldVertices(body: Body, entity: RawEntity, isCut: boolean): boolean
   return vertices > 0;
 }
 
-function normalBody(entity: RawEntity, isCut: boolean): { body: NormalEntity["body"]; mended: boolean } {
-  const wanted = FORMS.get(entity.type);
-  if (!wanted) return { body: { why: "not-a-curve" }, mended: false };
-  const body = new Body();
-  const isPolyline = entity.type === "LWPOLYLINE" || entity.type === "POLYLINE";
-  if (isPolyline) {
-    const flags = firstInteger(entity, 70, 0);
-    if (entity.type === "POLYLINE" && (flags & MESH) !== 0) {
-      return { body: { why: "three-dimensional" }, mended: false };
-    }
-    // The end of a polyline that is cut short is not known to meet its start.
-    body.push(70, String(isCut ? flags & ~CLOSED : flags & CLOSED));
-  }
-  const isWhole = isPolyline
-    ? (entity.type === "POLYLINE" ? pushOldVertices : pushLightVertices)(body, entity, isCut)
-    : body.pushWanted(entity.groups, wanted);
-  if (!isWhole || body.damaged) return { body: { why: "damaged" }, mended: false };
-  return { body: { lines: body.lines }, mended: body.mended };
+/** Pushes the entity's groups; false where it is damaged. */
+function pushBody(body: Body, entity: RawEntity, form: EntityForm, isCut: boolean): boolean {
+  const isLight = entity.type === "LWPOLYLINE";
+  if (!isLight && entity.type !== "POLYLINE") return body.pushWanted(entity.groups, form);
+  // The end of a polyline that is cut short is not known to meet its start.
+  const kept = (isLight ? 0 : WORLD) | (isCut ? 0 : CLOSED);
+  body.push(70, String(firstInteger(entity, 70, 0) & kept));
+  return isLight ? pushLightVertices(body, entity, isCut) : pushOldVertices(body, entity, isCut);
 }
 
-/** `isCut`: the file ends within this entity. */
-export function normaliseEntity(entity: RawEntity, isCut: boolean): NormalEntity {
-  const { body, mended } = normalBody(entity, isCut);
-  const layer = firstValue(entity, 8) ?? "";
-  return {
-    type: entity.type,
+const isMesh = (entity: RawEntity): boolean =>
+  entity.type === "POLYLINE" && (firstInteger(entity, 70, 0) & MESH) !== 0;
+
+export interface Normalised {
+  readonly entity: NormalEntity;
+  /** Why nothing was pushed; null where the parser is to read the entity. */
+  readonly why: IgnoredReason | null;
+}
+
+/**
+ * Pushes the groups the reader needs of an entity on `lines`, in an order and spelling that the parser takes, after its
+ * type and `ordinal`. `isCut` says that the file ends within the entity.
+ */
+export function normaliseEntity(
+  raw: RawEntity,
+  isCut: boolean,
+  lines: string[],
+  ordinal: number,
+): Normalised {
+  const form = FORMS.get(raw.type);
+  const before = lines.length;
+  const body = new Body(lines);
+  let why: IgnoredReason | null = null;
+  if (!form) why = "not-a-curve";
+  else if (isMesh(raw)) why = "three-dimensional";
+  else {
+    lines.push("0", raw.type, "5", String(ordinal));
+    if (!pushBody(body, raw, form, isCut) || body.damaged) why = "damaged";
+  }
+  if (why !== null) lines.length = before;
+  const layer = firstValue(raw, 8) ?? "";
+  const hasText = TEXT_TYPES.has(raw.type) || raw.members.some(({ type }) => type === "ATTRIB");
+  const entity = {
+    type: raw.type,
     layer: layer === "" ? "0" : unescapeCharacters(layer),
-    paperSpace: firstInteger(entity, 67, 0) === 1,
-    invisible: firstInteger(entity, 60, 0) === 1,
-    block: entity.type === "INSERT" ? firstValue(entity, 2) : null,
-    body,
-    mended,
-    raw: TEXT_TYPES.has(entity.type) || entity.members.some(({ type }) => type === "ATTRIB") ? entity : null,
+    paperSpace: firstInteger(raw, 67, 0) === 1,
+    invisible: firstInteger(raw, 60, 0) === 1,
+    block: raw.type === "INSERT" ? firstValue(raw, 2) : null,
+    mended: why === null && body.mended,
+    raw: hasText ? raw : null,
   };
+  return { entity, why };
 }

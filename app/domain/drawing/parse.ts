@@ -1,7 +1,7 @@
 import DxfParser, { type IEntity } from "dxf-parser";
 import { ENTITY_READERS } from "./curve-readers";
-import { type EntityContent, GroupNumbers } from "./entity-content";
-import type { NormalEntity } from "./normal-entity";
+import { type EntityContent, GroupNumbers, refused } from "./entity-content";
+import { type NormalEntity, normaliseEntity, type RawEntity } from "./normal-entity";
 
 type HandlerClass = Parameters<DxfParser["registerEntityHandler"]>[0];
 type Handler = InstanceType<HandlerClass>;
@@ -32,26 +32,50 @@ function handlerClass(
   };
 }
 
-/**
- * The contents of normalised entities, in their order; null for those without a body. The parser sees one section of
- * checked groups with our own ordinals as handles, so nothing of a damaged file can hold it up or make it speak.
- */
-export function parseEntities(entities: readonly NormalEntity[]): (EntityContent | null)[] {
-  const lines: string[] = ["0", "SECTION", "2", "ENTITIES"];
-  for (const [index, { type, body }] of entities.entries()) {
-    if (!("lines" in body)) continue;
-    lines.push("0", type, "5", String(index));
-    for (const line of body.lines) lines.push(line);
-  }
-  lines.push("0", "ENDSEC", "0", "EOF");
+/** Entities parsed in one go: enough to make the parser's start cheap, few enough to keep its memory small. */
+const BATCH = 2000;
 
-  const parser = new DxfParser();
-  for (const [type, read] of ENTITY_READERS) {
-    parser.registerEntityHandler(handlerClass(type as Handler["ForEntityName"], read));
+const OPENING = "0\nSECTION\n2\nENTITIES\n";
+const CLOSING = "\n0\nENDSEC\n0\nEOF";
+
+/** What an entity came to; `content` is there once its batch is parsed. */
+export interface ParsedItem {
+  readonly entity: NormalEntity;
+  content: EntityContent;
+}
+
+/**
+ * Reads entities through the parser, a batch at a time. The parser sees one section of checked groups with our own
+ * ordinals as handles, so nothing of a damaged file can hold it up or make it speak.
+ */
+export class EntityParser {
+  readonly #parser = new DxfParser();
+  #items: ParsedItem[] = [];
+  #lines: string[] = [];
+
+  constructor() {
+    for (const [type, read] of ENTITY_READERS) {
+      this.#parser.registerEntityHandler(handlerClass(type as Handler["ForEntityName"], read));
+    }
   }
-  const contents: (EntityContent | null)[] = entities.map(() => null);
-  for (const entity of parser.parse(lines.join("\n"))?.entities ?? []) {
-    contents[Number(entity.handle)] = (entity as ReadEntity).content;
+
+  /** Takes the next entity; its content is settled by the next `flush` at the latest. */
+  add(raw: RawEntity, isCut: boolean): ParsedItem {
+    const { entity, why } = normaliseEntity(raw, isCut, this.#lines, this.#items.length);
+    if (why !== null) return { entity, content: refused(why) };
+    const item = { entity, content: refused("damaged") };
+    this.#items.push(item);
+    if (this.#items.length >= BATCH) this.flush();
+    return item;
   }
-  return contents;
+
+  flush(): void {
+    if (this.#items.length === 0) return;
+    const text = `${OPENING}${this.#lines.join("\n")}${CLOSING}`;
+    for (const parsed of this.#parser.parse(text)?.entities ?? []) {
+      this.#items[Number(parsed.handle)].content = (parsed as ReadEntity).content;
+    }
+    this.#items = [];
+    this.#lines = [];
+  }
 }

@@ -4,27 +4,19 @@ import type { Drawing, ReadResult } from "./drawing";
 import { Expansion } from "./expand";
 import { LayerTable } from "./layer-table";
 import type { NormalEntity } from "./normal-entity";
-import { parseEntities } from "./parse";
+import { EntityParser } from "./parse";
 import { type DxfSections, readSections } from "./sections";
 import { sniffContent } from "./sniff";
 import { otherUnitOfCode, unitOfCode } from "./units-code";
 
-/** Content of every entity, the parser called once for the drawing and all its blocks. */
-function readItems(sections: DxfSections): { model: Item[]; blocks: Map<string, BlockItems> } {
-  const groups = [sections.entities, ...sections.blocks.map(({ entities }) => entities)];
-  const contents = parseEntities(groups.flat());
-  let next = 0;
-  const items = (entities: readonly NormalEntity[]): Item[] =>
-    entities.map((entity) => ({ entity, content: contents[next++] }));
-  const model = items(sections.entities);
-  const blocks = new Map<string, BlockItems>();
-  for (const { name, base, entities } of sections.blocks) {
-    blocks.set(blockKey(name), { name, base, items: items(entities) });
-  }
-  return { model, blocks };
+function readItems(text: string): DxfSections<Item> {
+  const parser = new EntityParser();
+  const sections = readSections<Item>(text, (raw, isCut) => parser.add(raw, isCut));
+  parser.flush();
+  return sections;
 }
 
-function notesOf(sections: DxfSections, decoding: readonly string[]): string[] {
+function notesOf(sections: DxfSections<Item>, decoding: readonly string[]): string[] {
   const notes = [...decoding];
   const { scan, header } = sections;
   if (!scan.ended) {
@@ -35,9 +27,8 @@ function notesOf(sections: DxfSections, decoding: readonly string[]): string[] {
     );
   }
   if (scan.strayLines > 0) notes.push(`${scan.strayLines} lines out of step were passed over.`);
-  const mended = [sections.entities, ...sections.blocks.map((block) => block.entities)]
-    .flat()
-    .filter((entity) => entity.mended).length;
+  const items = [sections.entities, ...sections.blocks.map((block) => block.entities)].flat();
+  const mended = items.filter(({ entity }) => entity.mended).length;
   if (mended > 0)
     notes.push(`Numbers of ${mended} entities were written with a comma or the letter D and were mended.`);
   const other = otherUnitOfCode(header.units);
@@ -69,8 +60,11 @@ export function readDrawing(bytes: Uint8Array): ReadResult {
   const content = sniffContent(bytes);
   if (!content.ok) return content;
   const { text, notes } = decodeText(bytes);
-  const sections = readSections(text);
-  const { model, blocks } = readItems(sections);
+  const sections = readItems(text);
+  const model = sections.entities;
+  const blocks = new Map<string, BlockItems>();
+  for (const { name, base, entities } of sections.blocks)
+    blocks.set(blockKey(name), { name, base, items: entities });
   const layers = new LayerTable(sections.layers);
   const expansion = new Expansion(weighBlocks(blocks), layers);
   const inModelSpace = model.filter(({ entity }) => !entity.paperSpace);

@@ -1,5 +1,5 @@
 import { firstInteger, firstValue, type GroupRecord, type RecordScan, scanRecords } from "./groups";
-import { type NormalEntity, normaliseEntity } from "./normal-entity";
+import type { RawEntity } from "./normal-entity";
 import { readNumber } from "./numbers";
 import { unescapeCharacters } from "./strings";
 
@@ -17,18 +17,18 @@ export interface DxfLayer {
   readonly frozen: boolean;
 }
 
-export interface DxfBlock {
+export interface DxfBlock<Item> {
   readonly name: string;
   readonly base: { readonly x: number; readonly y: number };
-  readonly entities: readonly NormalEntity[];
+  readonly entities: readonly Item[];
 }
 
-/** A file taken apart into sections. */
-export interface DxfSections {
+/** A file taken apart into sections, each entity as what `take` made of it. */
+export interface DxfSections<Item> {
   readonly header: DxfHeader;
   readonly layers: readonly DxfLayer[];
-  readonly blocks: readonly DxfBlock[];
-  readonly entities: readonly NormalEntity[];
+  readonly blocks: readonly DxfBlock<Item>[];
+  readonly entities: readonly Item[];
   /** Whether an ENTITIES section was met, and whether the file goes on past its end. */
   readonly hasEntities: boolean;
   readonly entitiesClosed: boolean;
@@ -59,33 +59,36 @@ function readLayer(record: GroupRecord): DxfLayer {
   };
 }
 
-function readBlockHead(record: GroupRecord): {
-  name: string;
-  base: { x: number; y: number };
-  entities: NormalEntity[];
-} {
-  const coordinate = (code: number) => readNumber(firstValue(record, code) ?? "0")?.value ?? 0;
-  return { name: firstValue(record, 2) ?? "", base: { x: coordinate(10), y: coordinate(20) }, entities: [] };
+function readBlockHead(record: GroupRecord): Omit<DxfBlock<never>, "entities"> {
+  const coordinate = (code: number) => readNumber(firstValue(record, code) ?? "0") ?? 0;
+  return { name: firstValue(record, 2) ?? "", base: { x: coordinate(10), y: coordinate(20) } };
 }
 
 /**
  * Sorts a file's records into sections. Missing ENDSEC, ENDTAB, ENDBLK and SEQEND are taken as meant: each new section or
  * block closes the one before, and a member belongs to the last owner of its kind if nothing came between.
+ * `take` is called once per entity, in the file's order; `isCut` says that the file ends within it.
  */
-export function readSections(text: string): DxfSections {
+export function readSections<Item>(
+  text: string,
+  take: (entity: RawEntity, isCut: boolean) => Item,
+): DxfSections<Item> {
   const scan: RecordScan = { strayLines: 0, ended: false };
   let header: DxfHeader = { version: null, units: null };
   const layers: DxfLayer[] = [];
-  const blocks: ReturnType<typeof readBlockHead>[] = [];
-  const entities: NormalEntity[] = [];
+  const blocks: (DxfBlock<Item> & { entities: Item[] })[] = [];
+  const entities: Item[] = [];
   let hasEntities = false;
   let entitiesClosed = false;
   let section = "";
   let block: (typeof blocks)[number] | null = null;
-  let owner: { record: GroupRecord; members: GroupRecord[]; into: NormalEntity[] } | null = null;
+  let owner: { record: GroupRecord; members: GroupRecord[]; into: Item[] } | null = null;
 
   const finishOwner = (isCut: boolean) => {
-    if (owner) owner.into.push(normaliseEntity({ ...owner.record, members: owner.members }, isCut));
+    if (owner)
+      owner.into.push(
+        take({ type: owner.record.type, groups: owner.record.groups, members: owner.members }, isCut),
+      );
     owner = null;
   };
 
@@ -110,7 +113,7 @@ export function readSections(text: string): DxfSections {
     } else if (section === "TABLES" && type === "LAYER") {
       layers.push(readLayer(record));
     } else if (section === "BLOCKS" && type === "BLOCK") {
-      block = readBlockHead(record);
+      block = { ...readBlockHead(record), entities: [] };
       blocks.push(block);
     } else if (section === "BLOCKS" && type === "ENDBLK") {
       block = null;

@@ -12,7 +12,7 @@ export interface PlacedText {
 }
 
 function readText(record: GroupRecord): PlacedText | null {
-  const number = (code: number) => readNumber(firstValue(record, code) ?? "0")?.value ?? 0;
+  const number = (code: number) => readNumber(firstValue(record, code) ?? "0") ?? 0;
   const isParagraphs = record.type === "MTEXT";
   const pieces = record.groups.filter(({ code }) => code === 1 || (isParagraphs && code === 3));
   const joined = (isParagraphs ? pieces : pieces.slice(0, 1)).map(({ value }) => value).join("");
