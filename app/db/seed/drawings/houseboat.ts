@@ -68,7 +68,7 @@ export function galleyCarcass(): string {
     { part: vent, copies: 1 },
     { part: block, copies: 4 },
   ];
-  return toDxf(inRows(parts, 2400, 40), { declared: "mm", joined: true });
+  return toDxf(inRows(parts, 2600, 40), { declared: "mm", joined: true });
 }
 
 /** A pair of locker doors, left and right mirrored, each with two hinges and a latch opening: 2 parts. */
