@@ -55,7 +55,9 @@ export function orRollBack<Value extends object>(verdict: Verdict<Value>): { rea
 }
 
 /** Turns a rolled-back refusal into the flow's answer. */
-export async function answering<Value extends object>(work: () => Promise<Verdict<Value>>): Promise<Verdict<Value>> {
+export async function answering<Value extends object>(
+  work: () => Promise<Verdict<Value>>,
+): Promise<Verdict<Value>> {
   try {
     return await work();
   } catch (error) {

@@ -59,3 +59,14 @@ export async function releaseSheets(executor: Executor, lotId: string, sheets: n
     })
     .where(eq(lots.id, lotId));
 }
+
+/** Takes cut sheets off a lot; a number below zero puts them back. */
+export async function takeSheets(executor: Executor, lotId: string, sheets: number): Promise<void> {
+  await executor
+    .update(lots)
+    .set({
+      sheetsOnHand: sql`max(0, ${lots.sheetsOnHand} - ${sheets})`,
+      version: sql`${lots.version} + 1`,
+    })
+    .where(eq(lots.id, lotId));
+}

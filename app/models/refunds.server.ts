@@ -11,10 +11,30 @@ export interface NewRefund {
   readonly amount: number;
   readonly reason: string;
   readonly askedBy: string;
+  /** Known from the start when the payment service made it by itself. */
+  readonly externalId?: string;
 }
 
-export async function insertRefund(tx: Executor, refund: NewRefund): Promise<void> {
-  await tx.insert(refunds).values({ ...refund, status: "asked" });
+/** False when this refund was asked for before. */
+export async function insertRefund(tx: Executor, refund: NewRefund): Promise<boolean> {
+  const inserted = await tx
+    .insert(refunds)
+    .values({ ...refund, status: "asked" })
+    .onConflictDoNothing({ target: refunds.id })
+    .returning({ id: refunds.id });
+  return inserted.length === 1;
+}
+
+export async function findRefund(
+  executor: Executor,
+  orderId: string,
+  refundId: string,
+): Promise<Refund | undefined> {
+  const [row] = await executor
+    .select()
+    .from(refunds)
+    .where(and(eq(refunds.id, refundId), eq(refunds.orderId, orderId)));
+  return row;
 }
 
 /** Cents asked back or given back through a checkout; failed ones do not count. */

@@ -1,6 +1,6 @@
 import { and, eq, gte, inArray, isNull, lte, max, ne, sql, sum } from "drizzle-orm";
 import type { Executor } from "~/db/client.server";
-import { machines, materials, nestSheets, nests, runs } from "~/db/schema";
+import { machines, materials, nestSheets, nests, orders, quotes, runs } from "~/db/schema";
 
 export type Run = typeof runs.$inferSelect;
 
@@ -69,6 +69,22 @@ export async function minutesByDay(executor: Executor, from: string): Promise<Ma
     .where(and(gte(runs.day, from), isNull(runs.finishedAt)))
     .groupBy(runs.day);
   return new Map(rows.map((row) => [row.day, row.minutes ?? 0]));
+}
+
+/** Minutes that are paid for and on no machine's day yet: by the quotes of orders not nested, by the sheets of others. */
+export async function waitingMinutes(executor: Executor): Promise<number> {
+  const [quoted] = await executor
+    .select({ minutes: sum(quotes.machineMinutes).mapWith(Number) })
+    .from(orders)
+    .innerJoin(quotes, eq(orders.quoteId, quotes.id))
+    .where(inArray(orders.stage, ["paid", "received"]));
+  const [nested] = await executor
+    .select({ minutes: sum(nestSheets.estimatedMinutes).mapWith(Number) })
+    .from(nestSheets)
+    .innerJoin(nests, eq(nestSheets.nestId, nests.id))
+    .leftJoin(runs, eq(runs.sheetId, nestSheets.id))
+    .where(and(eq(nests.status, "locked"), eq(nestSheets.status, "planned"), isNull(runs.id)));
+  return (quoted?.minutes ?? 0) + (nested?.minutes ?? 0);
 }
 
 export async function insertRun(tx: Executor, plan: RunPlan): Promise<Run> {

@@ -76,7 +76,8 @@ export const MOVES = {
   },
   revise: { from: ["quoted", "needs-review"], to: "draft", by: ["builder"], needs: [] },
   "ask-review": { from: ["quoted"], to: "needs-review", by: ["builder", "system"], needs: ["quote-open"] },
-  "accept-review": { from: ["needs-review"], to: "quoted", by: FLOOR, needs: ["no-stops"] },
+  /** By the system when the last question is answered and nobody else has to look. */
+  "accept-review": { from: ["needs-review"], to: "quoted", by: [...FLOOR, "system"], needs: ["no-stops"] },
   "send-back": { from: ["needs-review"], to: "draft", by: FLOOR, needs: [], reason: true },
   pay: {
     from: ["quoted"],

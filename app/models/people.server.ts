@@ -1,0 +1,32 @@
+import { and, eq } from "drizzle-orm";
+import type { Executor } from "~/db/client.server";
+import { userRoles, users } from "~/db/schema";
+import type { Role } from "~/domain/orders";
+
+/** Whom a mail goes to, and what of a person an order's price depends on. */
+export type Addressee = Pick<
+  typeof users.$inferSelect,
+  "id" | "name" | "email" | "shownUnit" | "taxExempt" | "mutedMails"
+>;
+
+const addressee = {
+  id: users.id,
+  name: users.name,
+  email: users.email,
+  shownUnit: users.shownUnit,
+  taxExempt: users.taxExempt,
+  mutedMails: users.mutedMails,
+};
+
+export async function findAddressee(executor: Executor, userId: string): Promise<Addressee | undefined> {
+  const [row] = await executor.select(addressee).from(users).where(eq(users.id, userId));
+  return row;
+}
+
+export async function listAddresseesWithRole(executor: Executor, role: Role): Promise<Addressee[]> {
+  return executor
+    .select(addressee)
+    .from(users)
+    .innerJoin(userRoles, and(eq(userRoles.userId, users.id), eq(userRoles.role, role)))
+    .orderBy(users.createdAt);
+}
