@@ -5,8 +5,9 @@ import type { FileGeometry } from "~/documents/geometry";
 import type { FileInterpretation, Interpretation } from "~/domain/orders";
 import type { LengthUnit } from "~/domain/units";
 import type { FindPartsInput } from "~/jobs/find-parts.worker";
-import { type PoolRefusal, runInPool } from "~/jobs/pool.server";
-import { workerFile } from "~/jobs/worker-files.server";
+import { runInPool } from "~/jobs/pool.server";
+import type { TaskRefusal } from "~/jobs/task";
+import { moduleFile } from "~/jobs/worker-files.server";
 import type { OrderDrawing } from "~/models/drawing-files.server";
 import type { Reading, ReadingSummary } from "~/models/readings.server";
 import { storage } from "~/services/clients.server";
@@ -72,7 +73,7 @@ export async function findOrderParts({ order, content }: FindOrderPartsOptions):
   };
 }
 
-const REFUSALS: Record<PoolRefusal, string> = {
+const REFUSALS: Record<TaskRefusal, string> = {
   "too-long": "Finding the parts took too long. Upload a drawing with only the parts to be cut.",
   "too-much-memory": "The drawing is too large to find its parts. Split it into several files.",
   "broke-off": "The parts of this drawing could not be found. Send us a message; a person will look at it.",
@@ -110,7 +111,7 @@ async function reportOf(drawingKey: string, asked: Pick<FindPartsInput, "unit" |
   const drawing = await storage.get(drawingKey);
   if (!drawing) throw new Error(`The drawing ${drawingKey} is not in the storage.`);
   const input: FindPartsInput = { drawing, ...asked };
-  const found = await runInPool<Uint8Array>({ file: await workerFile("find-parts"), input });
+  const found = await runInPool<Uint8Array>({ file: await moduleFile("find-parts.worker"), input });
   if (!found.ok) return found;
   await storage.put(key, found.result, "application/gzip");
   return { ok: true, report: parseReport(found.result) } as const;

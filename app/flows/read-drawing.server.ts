@@ -1,8 +1,9 @@
 import type { Executor } from "~/db/client.server";
 import type { JobHandler, Settle } from "~/jobs/handler";
-import { type PoolRefusal, runInPool } from "~/jobs/pool.server";
+import { runInPool } from "~/jobs/pool.server";
 import type { ReadDrawingInput, ReadDrawingOutput } from "~/jobs/read-drawing.worker";
-import { workerFile } from "~/jobs/worker-files.server";
+import type { TaskRefusal } from "~/jobs/task";
+import { moduleFile } from "~/jobs/worker-files.server";
 import { drawingKey, ordersWithFile } from "~/models/drawing-files.server";
 import { recordEvent } from "~/models/events.server";
 import { enqueueJob, type Job } from "~/models/jobs.server";
@@ -18,7 +19,7 @@ interface ReadDrawingOptions {
   timeLimitMs?: number;
 }
 
-const REFUSALS: Record<PoolRefusal, string> = {
+const REFUSALS: Record<TaskRefusal, string> = {
   "too-long":
     "The drawing took too long to read. Save it again as DXF with only the parts to be cut, and upload that.",
   "too-much-memory":
@@ -51,7 +52,7 @@ export function readDrawingHandler(options: ReadDrawingOptions = {}): JobHandler
       const bytes = await storage.get(drawingKey(sha256));
       if (!bytes) throw new Error(`The bytes of ${sha256} are not in the storage.`);
       const input: ReadDrawingInput = { bytes };
-      const file = options.workerUrl ?? (await workerFile("read-drawing"));
+      const file = options.workerUrl ?? (await moduleFile("read-drawing.worker"));
       const read = await runInPool<ReadDrawingOutput>({
         file,
         input,

@@ -1,99 +1,124 @@
+import { type ChildProcess, fork } from "node:child_process";
 import { availableParallelism } from "node:os";
-import { Piscina } from "piscina";
+import { fileURLToPath } from "node:url";
+import type { Task, TaskResult } from "./task";
+import { moduleFile } from "./worker-files.server";
 
-/** Why a worker's task came to no result; the words are for the person who waits for it. */
-export type PoolRefusal = "too-long" | "too-much-memory" | "broke-off";
-export type PoolResult<Result> =
-  | { readonly ok: true; readonly result: Result }
-  | { readonly ok: false; readonly reason: PoolRefusal; readonly detail: string };
-
-interface PoolTask {
-  /** URL of a module whose default export takes the input and gives the result. */
-  readonly file: string;
-  readonly input: unknown;
+interface PoolTask extends Omit<Task, "timeLimitMs"> {
   readonly timeLimitMs?: number;
-  /** Cancels the task; it then counts as broken off. */
+  /** Ends the task; it then counts as broken off. */
   readonly signal?: AbortSignal;
 }
 
-export const TIME_LIMIT_MS = 20_000;
-/** Of each thread's heap. */
-const HEAP_LIMIT_MB = 512;
+const TIME_LIMIT_MS = 20_000;
+/** How long after its time limit a host that does not answer is ended itself. */
+const GRACE_MS = 5_000;
 /** One processor stays with the server. */
-const THREADS = Math.max(1, availableParallelism() - 1);
-const IDLE_MS = 30_000;
+const MOST_HOSTS = Math.max(1, availableParallelism() - 1);
+/** What is kept of a host's last words. */
+const LAST_WORDS = 2_000;
 
-interface Shelf {
-  kerfpostPools?: Map<string, Piscina>;
-  kerfpostSlots?: { free: number; waiting: (() => void)[] };
+interface Pool {
+  free: number;
+  waiting: (() => void)[];
+  idle: ChildProcess[];
 }
-const shelf = globalThis as Shelf;
+const shelf = globalThis as { kerfpostPool?: Pool };
+
+function pool(): Pool {
+  shelf.kerfpostPool ??= { free: MOST_HOSTS, waiting: [], idle: [] };
+  return shelf.kerfpostPool;
+}
 
 /**
- * Runs a task in a worker thread with a limit of heap and of time, counted from when a thread is free for it. A task
- * that hangs, runs out of memory or throws ends its thread, not the process.
+ * Runs a task in a worker thread of a task host, with a limit of heap and of time, the latter counted from when a
+ * host is free for it. A task that hangs, runs out of memory, throws or leaves ends its thread or its host, not this
+ * process.
  */
-export async function runInPool<Result>(task: PoolTask): Promise<PoolResult<Result>> {
-  const release = await takeSlot();
+export async function runInPool<Result>(task: PoolTask): Promise<TaskResult<Result>> {
+  const release = await takeTurn();
   try {
-    return await runNow(task);
+    const host = pool().idle.pop() ?? (await startHost());
+    const result = await runOn(host, task);
+    if (host.connected && !host.killed) rest(host);
+    return result as TaskResult<Result>;
   } finally {
     release();
   }
 }
 
-async function runNow<Result>(task: PoolTask): Promise<PoolResult<Result>> {
-  const { file, input, timeLimitMs = TIME_LIMIT_MS, signal } = task;
-  const limit = AbortSignal.timeout(timeLimitMs);
-  try {
-    const running = poolFor(file).run(input, {
-      filename: file,
-      signal: signal ? AbortSignal.any([limit, signal]) : limit,
-    });
-    return { ok: true, result: (await running) as Result };
-  } catch (error) {
-    const detail = error instanceof Error ? error.message : String(error);
-    if (limit.aborted && !signal?.aborted) return { ok: false, reason: "too-long", detail };
-    if (error instanceof Error && "code" in error && error.code === "ERR_WORKER_OUT_OF_MEMORY")
-      return { ok: false, reason: "too-much-memory", detail };
-    return { ok: false, reason: "broke-off", detail };
-  }
+/** Ends the hosts that have nothing to do; the next task starts new ones. */
+export function closePool(): void {
+  for (const host of pool().idle.splice(0)) host.kill("SIGKILL");
 }
 
-/** Ends all threads; the next task starts new ones. */
-export async function closePools(): Promise<void> {
-  const pools = [...(shelf.kerfpostPools?.values() ?? [])];
-  shelf.kerfpostPools?.clear();
-  await Promise.all(pools.map((pool) => pool.destroy()));
-}
-
-/** One slot a thread, first come, first served, so that waiting in line is no part of a task's time. */
-async function takeSlot(): Promise<() => void> {
-  shelf.kerfpostSlots ??= { free: THREADS, waiting: [] };
-  const slots = shelf.kerfpostSlots;
-  if (slots.free > 0) slots.free -= 1;
-  else await new Promise<void>((resolve) => slots.waiting.push(resolve));
+/** One turn a host, first come, first served. */
+async function takeTurn(): Promise<() => void> {
+  const { waiting } = pool();
+  if (pool().free > 0) pool().free -= 1;
+  else await new Promise<void>((resolve) => waiting.push(resolve));
   return () => {
-    const next = slots.waiting.shift();
+    const next = waiting.shift();
     if (next) next();
-    else slots.free += 1;
+    else pool().free += 1;
   };
 }
 
-/** Source files are run through tsx, chunks of the build as they are; all tasks of one sort share the threads. */
-function poolFor(file: string): Piscina {
-  const sort = file.endsWith(".ts") ? "source" : "built";
-  shelf.kerfpostPools ??= new Map();
-  const known = shelf.kerfpostPools.get(sort);
-  if (known) return known;
-  const pool = new Piscina({
-    minThreads: 0,
-    maxThreads: THREADS,
-    idleTimeout: IDLE_MS,
-    execArgv: sort === "source" ? ["--import", "tsx"] : [],
-    resourceLimits: { maxOldGenerationSizeMb: HEAP_LIMIT_MB },
+/** Source files are run through tsx, chunks of the build as they are. A host sees nothing of the environment's secrets. */
+async function startHost(): Promise<ChildProcess> {
+  const file = await moduleFile("task-host");
+  const { PATH, TMPDIR, NODE_ENV } = process.env;
+  return fork(fileURLToPath(file), [], {
+    execArgv: file.endsWith(".ts") ? ["--import", "tsx"] : [],
+    env: { PATH, TMPDIR, NODE_ENV },
+    serialization: "advanced",
+    stdio: ["ignore", "ignore", "pipe", "ipc"],
   });
-  pool.on("error", (error) => console.error("A worker thread failed:", error));
-  shelf.kerfpostPools.set(sort, pool);
-  return pool;
+}
+
+/** A host at rest keeps no process alive; when its parent ends, so does it. */
+function rest(host: ChildProcess): void {
+  const { idle } = pool();
+  host.once("exit", () => {
+    const place = idle.indexOf(host);
+    if (place >= 0) idle.splice(place, 1);
+  });
+  host.unref();
+  host.channel?.unref();
+  idle.push(host);
+}
+
+function runOn(host: ChildProcess, { file, input, signal, timeLimitMs = TIME_LIMIT_MS }: PoolTask) {
+  host.ref();
+  host.channel?.ref();
+  return new Promise<TaskResult<unknown>>((resolve) => {
+    let lastWords = "";
+    let overdue = false;
+    const hear = (words: Buffer) => {
+      lastWords = `${lastWords}${words}`.slice(-LAST_WORDS);
+    };
+    const end = () => host.kill("SIGKILL");
+    const backstop = setTimeout(() => {
+      overdue = true;
+      end();
+    }, timeLimitMs + GRACE_MS);
+    const settle = (result: TaskResult<unknown>) => {
+      clearTimeout(backstop);
+      host.off("message", settle).off("exit", exited).off("error", failed);
+      host.stderr?.off("data", hear);
+      signal?.removeEventListener("abort", end);
+      resolve(result);
+    };
+    const exited = (code: number | null, by: NodeJS.Signals | null) => {
+      const outOfMemory = by === "SIGABRT" || /heap out of memory/i.test(lastWords);
+      const reason = overdue ? "too-long" : outOfMemory ? "too-much-memory" : "broke-off";
+      settle({ ok: false, reason, detail: `The host ended (${by ?? code}). ${lastWords}` });
+    };
+    const failed = (error: Error) => settle({ ok: false, reason: "broke-off", detail: error.message });
+    host.on("message", settle).on("exit", exited).on("error", failed);
+    host.stderr?.on("data", hear);
+    signal?.addEventListener("abort", end);
+    if (signal?.aborted) end();
+    else host.send({ file, input, timeLimitMs } satisfies Task);
+  });
 }

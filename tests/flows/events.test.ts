@@ -24,7 +24,9 @@ function listen(options: { reader?: "builder" | "staff"; after?: number | null; 
   let heard = "";
   const ended = (async () => {
     const decoder = new TextDecoder();
-    for await (const chunk of stream) heard += decoder.decode(chunk);
+    const reader = stream.getReader();
+    for (let read = await reader.read(); !read.done; read = await reader.read())
+      heard += decoder.decode(read.value);
   })();
   return {
     leave: () => leaving.abort(),

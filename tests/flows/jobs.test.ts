@@ -2,7 +2,7 @@ import { afterAll, beforeEach, describe, expect, test } from "vitest";
 import { db, transact } from "~/db/client.server";
 import { jobs } from "~/db/schema";
 import type { JobHandlers } from "~/jobs/handler";
-import { closePools, runInPool } from "~/jobs/pool.server";
+import { closePool, runInPool } from "~/jobs/pool.server";
 import { runDueJobs, runNextJob } from "~/jobs/run-job.server";
 import {
   cancelJob,
@@ -19,7 +19,7 @@ import trouble from "../support/workers/trouble.worker.ts?node-worker";
 
 freshDatabase();
 beforeEach(resetDatabase);
-afterAll(closePools);
+afterAll(closePool);
 
 const KINDS = ["read-drawing"] as const;
 const NOON = new Date("2027-03-01T12:00:00Z");
@@ -193,10 +193,13 @@ describe("worker threads", () => {
     expect(await run("answer")).toMatchObject({ ok: true });
   });
 
-  test("a task that eats the heap is ended, and the next one runs", async () => {
-    expect(await run("devour", 60_000)).toMatchObject({ ok: false, reason: "too-much-memory" });
-    expect(await run("answer")).toMatchObject({ ok: true });
-  });
+  test.each(["devour", "gorge"])(
+    "a task that would %s the heap is ended, and the next one runs",
+    async (how) => {
+      expect(await run(how, 60_000)).toMatchObject({ ok: false, reason: "too-much-memory" });
+      expect(await run("answer")).toMatchObject({ ok: true });
+    },
+  );
 
   test("a task that throws or leaves ends only itself", async () => {
     expect(await run("throw")).toMatchObject({
@@ -206,6 +209,14 @@ describe("worker threads", () => {
     });
     expect(await run("exit")).toMatchObject({ ok: false, reason: "broke-off" });
     expect(await run("answer")).toMatchObject({ ok: true });
+  });
+
+  test("a task that is called off ends at once", async () => {
+    const calledOff = AbortSignal.timeout(1_000);
+    const started = Date.now();
+    const result = await runInPool({ file: trouble, input: "hang", signal: calledOff });
+    expect(result).toMatchObject({ ok: false, reason: "broke-off" });
+    expect(Date.now() - started).toBeLessThan(5_000);
   });
 
   test("waiting for a free thread is no part of a task's time", async () => {

@@ -62,6 +62,7 @@ describe("reading", () => {
   test.each([
     ["hang", "too long"],
     ["devour", "too large"],
+    ["gorge", "too large"],
     ["exit", "damaged"],
   ])("a file that makes the reader %s ends as a failed reading with a plain sentence", async (how, words) => {
     const comment = new TextEncoder().encode(`999\ntrouble: ${how}\n`);

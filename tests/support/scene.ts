@@ -8,7 +8,7 @@ import { orderInterpretation } from "~/flows/order-interpretation.server";
 import { saveInterpretation } from "~/flows/save-interpretation.server";
 import { uploadDrawing } from "~/flows/upload-drawing.server";
 import { jobHandlers } from "~/jobs/handlers.server";
-import { closePools } from "~/jobs/pool.server";
+import { closePool } from "~/jobs/pool.server";
 import { runDueJobs } from "~/jobs/run-job.server";
 import { findOrder, type Order } from "~/models/orders.server";
 import { insertSettings } from "~/models/settings.server";
@@ -34,9 +34,9 @@ export function freshScene(): ReturnType<typeof fakesForTests> {
   freshDatabase();
   const running = fakesForTests();
   beforeAll(() => putClients(running.services));
-  afterAll(async () => {
+  afterAll(() => {
     putClients(undefined);
-    await closePools();
+    closePool();
   });
   return running;
 }
