@@ -26,8 +26,9 @@ const BEYOND = 6;
 const ROOM = 40;
 /** A height is given where the part is at least this tall on the screen. */
 const LEAST_TALL = 90;
-/** Advance of one mono character at 12 px. */
+/** Advance of one mono character and height of a line at 12 px. */
 const CHARACTER = 7.3;
+const LINE = 16;
 
 /** Width beneath (or above) and height beside the chosen part, with thin extension lines, after ISO 129. */
 export function DimensionLines({ box, others, view, size, unit }: DimensionLinesProps) {
@@ -42,12 +43,14 @@ export function DimensionLines({ box, others, view, size, unit }: DimensionLines
     : isClear({ ...box, minX: box.minX - room, maxX: box.minX })
       ? left - AWAY
       : null;
+  const inside = beside !== null && beside > LINE && beside < size.width - BEYOND;
   const edge = above ? top : bottom;
   const line = above ? top - AWAY : bottom + AWAY;
   const words = lengthInBoth(box.maxX - box.minX, unit);
   const half = (words.length * CHARACTER) / 2 + 6;
+  const between = right - left >= 2 * half;
   const middle = Math.min(Math.max((left + right) / 2, half), Math.max(size.width - half, half));
-  const side = bottom - top >= LEAST_TALL ? beside : null;
+  const side = inside && bottom - top >= LEAST_TALL ? beside : null;
   return (
     <svg aria-hidden="true" className="pointer-events-none font-mono text-caption font-semibold">
       <g className="stroke-blue" strokeWidth="1" fill="none">
@@ -61,7 +64,11 @@ export function DimensionLines({ box, others, view, size, unit }: DimensionLines
         )}
       </g>
       <g className="fill-blue stroke-sheet [paint-order:stroke]" strokeWidth="4" strokeLinejoin="round">
-        <text x={middle} y={line - 6} textAnchor="middle">
+        <text
+          x={middle}
+          y={between ? line - 6 : above ? line - BEYOND - 4 : line + BEYOND + 11}
+          textAnchor="middle"
+        >
           {words}
         </text>
         {side !== null && (

@@ -62,7 +62,9 @@ export const PartLabels = memo(function PartLabels({
           key={label.key}
           x={label.x}
           y={label.y + 11}
-          className={`text-caption font-semibold ${label.part === chosen || label.part === lit ? "fill-blue" : "fill-ink"}`}
+          strokeWidth="3"
+          strokeLinejoin="round"
+          className={`text-caption font-semibold [paint-order:stroke] ${label.part === chosen ? "stroke-blue-wash" : "stroke-sheet"} ${label.part === chosen || label.part === lit ? "fill-blue" : "fill-ink"}`}
         >
           {label.text}
         </text>

@@ -12,8 +12,10 @@ export interface Size {
   readonly height: number;
 }
 
-/** Room left around a fitted drawing, in pixels; more below, for the dimension line and the scale. */
-const MARGIN = { side: 28, above: 28, below: 76 };
+/** Room left above and below a fitted drawing, in pixels: more below, for the dimension line and the scale. */
+const MARGIN = { above: 28, below: 76 };
+/** Room at its sides: for a dimension line on a desk, less on a phone. */
+const sideMargin = (width: number): number => (width >= 640 ? 56 : 16);
 /** From a twentieth of a pixel in a millimetre (a 20 m drawing on a phone) to 200 (a twentieth of a millimetre). */
 const SCALES = { least: 0.01, most: 200 };
 
@@ -22,7 +24,7 @@ export function fittedView(box: ViewBox | null, size: Size): View {
   if (!box) return { scale: 1, x: size.width / 2, y: size.height / 2 };
   const wide = Math.max(box.maxX - box.minX, 1);
   const high = Math.max(box.maxY - box.minY, 1);
-  const roomX = Math.max(size.width - 2 * MARGIN.side, 40);
+  const roomX = Math.max(size.width - 2 * sideMargin(size.width), 40);
   const roomY = Math.max(size.height - MARGIN.above - MARGIN.below, 40);
   const scale = bounded(Math.min(roomX / wide, roomY / high));
   const middleY = MARGIN.above + roomY / 2;

@@ -30,7 +30,7 @@ export function ViewerToolbar(props: ViewerToolbarProps) {
   const { modes, mode, onMode, summary, measuring, onMeasuring, unit, onUnit, onFit, setAside } = props;
   return (
     <div className="flex flex-wrap items-center justify-between gap-x-4 gap-y-2 border-b border-line p-2">
-      <fieldset className="flex flex-wrap gap-1.5 print:hidden">
+      <fieldset className={`flex-wrap gap-1.5 print:hidden ${modes.length > 1 ? "flex" : "hidden sm:flex"}`}>
         <legend className="sr-only">What the drawing shows</legend>
         {modes.map(({ id, label }) => (
           <Button
