@@ -1,6 +1,8 @@
 import { createHash } from "node:crypto";
+import type { Executor } from "~/db/client.server";
 import { canonicalJson } from "~/documents/canonical-json";
-import type { PartRow } from "~/models/parts.server";
+import type { Order } from "~/models/orders.server";
+import { listParts, type PartRow } from "~/models/parts.server";
 
 /**
  * What the builder approves, in one value: labels, names, counts, sizes and stock of the part list as shown. The
@@ -24,3 +26,12 @@ export const partListHash = (quoteId: string, parts: readonly PartRow[]): string
       }),
     )
     .digest("hex");
+
+/** Of the part list of an order's current quote. Throws while it has none. */
+export async function listHashOfOrder(
+  executor: Executor,
+  { quoteId, revisionId }: Pick<Order, "quoteId" | "revisionId">,
+): Promise<string> {
+  if (quoteId === null || revisionId === null) throw new Error("The order has no quote.");
+  return partListHash(quoteId, await listParts(executor, revisionId));
+}

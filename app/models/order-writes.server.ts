@@ -7,6 +7,8 @@ type Order = typeof orders.$inferSelect;
 export type OrderChange = Partial<
   Pick<
     Order,
+    | "name"
+    | "trial"
     | "stage"
     | "heldFrom"
     | "holdReason"

@@ -1,4 +1,4 @@
-import { and, asc, eq, inArray, isNull, lte, or, sql } from "drizzle-orm";
+import { and, asc, desc, eq, inArray, isNull, lte, or, sql } from "drizzle-orm";
 import type { Executor } from "~/db/client.server";
 import { newId, outbox } from "~/db/schema";
 
@@ -25,6 +25,21 @@ export async function queueMail(executor: Executor, mail: NewMail): Promise<stri
     .onConflictDoNothing({ target: outbox.dedupeKey })
     .returning({ id: outbox.id });
   return row?.id;
+}
+
+/** The newest mail of a template to an address, sent or not. */
+export async function newestMailTo(
+  executor: Executor,
+  recipient: string,
+  template: string,
+): Promise<OutgoingMail | undefined> {
+  const [mail] = await executor
+    .select()
+    .from(outbox)
+    .where(and(eq(outbox.recipient, recipient), eq(outbox.template, template)))
+    .orderBy(desc(outbox.createdAt))
+    .limit(1);
+  return mail;
 }
 
 /** Takes mails that are due, oldest first, for `leaseMs`; another runner gets them only after that. */

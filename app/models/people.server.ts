@@ -30,3 +30,17 @@ export async function listAddresseesWithRole(executor: Executor, role: Role): Pr
     .innerJoin(userRoles, and(eq(userRoles.userId, users.id), eq(userRoles.role, role)))
     .orderBy(users.createdAt);
 }
+
+/** How a person reads lengths. */
+export async function setShownUnit(
+  executor: Executor,
+  userId: string,
+  shownUnit: "mm" | "in",
+): Promise<void> {
+  await executor.update(users).set({ shownUnit, updatedAt: new Date() }).where(eq(users.id, userId));
+}
+
+/** A valid certificate is on file: this person's orders carry no sales tax. */
+export async function markTaxExempt(executor: Executor, userId: string): Promise<void> {
+  await executor.update(users).set({ taxExempt: true, updatedAt: new Date() }).where(eq(users.id, userId));
+}
