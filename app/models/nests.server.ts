@@ -1,6 +1,6 @@
-import { and, desc, eq, inArray, isNull, max, sql } from "drizzle-orm";
+import { and, desc, eq, inArray, isNotNull, isNull, max, sql } from "drizzle-orm";
 import type { Executor } from "~/db/client.server";
-import { lots, materials, nestSheets, nests, parts, pieces, placements } from "~/db/schema";
+import { lots, materials, nestSheets, nests, parts, pieces, placements, runs } from "~/db/schema";
 
 export type Nest = typeof nests.$inferSelect;
 export type NestSheet = typeof nestSheets.$inferSelect;
@@ -164,6 +164,23 @@ export async function listPiecesOnSheet(
     .innerJoin(pieces, eq(placements.pieceId, pieces.id))
     .where(and(eq(placements.sheetId, sheetId), isNull(placements.releasedAt)));
   return rows.map((row) => row.piece);
+}
+
+/** Ids of the finished runs that cut these pieces. */
+export async function listRunsOfPieces(executor: Executor, pieceIds: readonly string[]): Promise<string[]> {
+  if (pieceIds.length === 0) return [];
+  const rows = await executor
+    .selectDistinct({ id: runs.id })
+    .from(placements)
+    .innerJoin(runs, eq(runs.sheetId, placements.sheetId))
+    .where(
+      and(
+        inArray(placements.pieceId, [...pieceIds]),
+        isNull(placements.releasedAt),
+        isNotNull(runs.finishedAt),
+      ),
+    );
+  return rows.map((row) => row.id);
 }
 
 /** False when somebody changed the nest since `version` was read. */

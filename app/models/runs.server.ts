@@ -150,3 +150,18 @@ export async function markRunFinished(
     .returning({ id: runs.id });
   return changed.length === 1;
 }
+
+/** Takes back that runs were made: their sheets wait again. */
+export async function clearRuns(tx: Executor, runIds: readonly string[]): Promise<void> {
+  if (runIds.length === 0) return;
+  await tx
+    .update(runs)
+    .set({
+      startedAt: null,
+      startedBy: null,
+      finishedAt: null,
+      actualMinutes: null,
+      version: sql`${runs.version} + 1`,
+    })
+    .where(inArray(runs.id, [...runIds]));
+}
