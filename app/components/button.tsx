@@ -30,12 +30,14 @@ export function Button({
       onClick={pending ? (event) => event.preventDefault() : onClick}
       className={buttonLook(variant, size, wide)}
     >
-      {children}
-      {pending && (
-        <>
+      {pending ? (
+        <span>
+          {children}
           <span aria-hidden="true">…</span>
           <span className="sr-only">, working</span>
-        </>
+        </span>
+      ) : (
+        children
       )}
     </button>
   );
