@@ -1,5 +1,5 @@
 /** Parts out of a drawing in millimetres: joining, containment, set-asides, operations, equal parts counted together. */
-export { type FindPartsRules, findParts, type Restored } from "./find-parts";
+export { type FindPartsRules, findParts } from "./find-parts";
 export { guessLayerRules } from "./layer-names";
 export { DRILL_SIZES } from "./operations";
 export type {
@@ -14,3 +14,4 @@ export type {
   PartsReport,
   SetAside,
 } from "./part";
+export type { Restored } from "./sort-out";

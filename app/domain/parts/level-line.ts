@@ -26,21 +26,24 @@ export function widestStretch(polygon: readonly Point[]): Stretch | null {
   }
   let best: Stretch | null = null;
   for (const share of SHARES) {
-    const found = stretchOn(polygon, below + (above - below) * share);
+    const found = stretchAcross([polygon], below + (above - below) * share);
     if (found && found.width > (best?.width ?? 0)) best = found;
     if (best && best.width > NEXT_TO_NOTHING * (maxY - minY)) break;
   }
   return best;
 }
 
-function stretchOn(polygon: readonly Point[], level: number): Stretch | null {
+/** The widest stretch inside an odd number of polygons on the line at a level, or null. */
+export function stretchAcross(polygons: readonly (readonly Point[])[], level: number): Stretch | null {
   const crossings: number[] = [];
-  let last = polygon[polygon.length - 1];
-  for (const next of polygon) {
-    if (last.y > level !== next.y > level) {
-      crossings.push(last.x + ((level - last.y) / (next.y - last.y)) * (next.x - last.x));
+  for (const polygon of polygons) {
+    let last = polygon[polygon.length - 1];
+    for (const next of polygon) {
+      if (last.y > level !== next.y > level) {
+        crossings.push(last.x + ((level - last.y) / (next.y - last.y)) * (next.x - last.x));
+      }
+      last = next;
     }
-    last = next;
   }
   crossings.sort((one, other) => one - other);
   let best: Stretch | null = null;

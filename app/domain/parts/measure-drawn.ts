@@ -1,22 +1,18 @@
 import type { Drawing } from "../drawing";
 import { type Box, boxIsEmpty, pathLength } from "../geometry";
 import { nestOutlines } from "./containment";
-import { distinctOutlines } from "./duplicates";
-import { type JoinTolerances, joinPaths } from "./joining";
-import { outlinesOf } from "./outline";
 import type { PartsReport } from "./part";
+import type { Trace } from "./trace";
 
 /**
- * All that is drawn, hidden layers included, before anything is set aside. `duplicates` names for each path an
- * earlier equal one or -1; outlines that
- * equal each other or enclose nothing count as loops, but not twice and not at all in the depths.
+ * All that is drawn, hidden layers included, before anything is set aside. `trace` is that of all paths, no
+ * gap over the bridging tolerance closed. Outlines that equal each other or enclose nothing count as loops, but
+ * not twice and not at all in the depths.
  */
 export function measureDrawn(
   drawing: Drawing,
-  duplicates: Int32Array,
+  { joined, outlines, duplicates }: Trace,
   extents: Box,
-  tolerances: JoinTolerances,
-  sameCurve: number,
 ): PartsReport["drawn"] {
   let length = 0;
   let uniqueLength = 0;
@@ -27,16 +23,8 @@ export function measureDrawn(
     if (duplicates[i] < 0) uniqueLength += own;
     if (drawing.paths[i].hidden) hiddenLength += own;
   }
-  const joined = joinPaths(
-    drawing.paths.filter((_, i) => duplicates[i] < 0),
-    tolerances,
-  );
   const depths: Record<string, number> = {};
-  for (const depth of nestOutlines(
-    distinctOutlines(outlinesOf(joined.loops, tolerances.node).outlines, sameCurve),
-  ).depth) {
-    depths[depth] = (depths[depth] ?? 0) + 1;
-  }
+  for (const depth of nestOutlines(outlines).depth) depths[depth] = (depths[depth] ?? 0) + 1;
   return {
     curves: drawing.paths.length,
     length,

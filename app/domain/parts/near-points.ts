@@ -47,16 +47,27 @@ class PointGrid {
   }
 }
 
-/** Every pair of points at most `reach` apart. */
+/** Partners kept of each point: a bound on memory where thousands of ends crowd together. */
+const MOST_PARTNERS = 16;
+
+/** Pairs of points at most `reach` apart; of a point with many such neighbours the nearest sixteen met before it. */
 export function pairsWithin(points: readonly Point[], reach: number): Pair[] {
   const pairs: Pair[] = [];
   const grid = new PointGrid(points, reach);
   for (let i = 0; i < points.length; i++) {
-    grid.visit(i, (other, gap) => pairs.push({ a: other, b: i, gap }));
+    let near: Pair[] = [];
+    grid.visit(i, (other, gap) => {
+      near.push({ a: other, b: i, gap });
+      if (near.length >= 2 * MOST_PARTNERS) near = nearest(near);
+    });
+    pairs.push(...nearest(near));
     grid.hold(i);
   }
   return pairs;
 }
+
+const nearest = (pairs: Pair[]): Pair[] =>
+  pairs.length <= MOST_PARTNERS ? pairs : pairs.sort((p, q) => p.gap - q.gap).slice(0, MOST_PARTNERS);
 
 /** Sets that grow together; `find` names the set of a member. */
 export class DisjointSets {

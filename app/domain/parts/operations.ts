@@ -29,6 +29,9 @@ export function layerReader(rules: readonly LayerRule[], bareUnit: number): Laye
   };
 }
 
+/** The group of outlines and openings. */
+export const THROUGH = "through";
+
 /**
  * Paths that may be joined to each other: outlines and all whose layer says nothing form one group; pockets of
  * one depth, drills and engraving each their own, so that a pocket's edge on an outline is no branch.
@@ -39,7 +42,7 @@ export function joiningGroups(paths: readonly DrawnPath[], reader: LayerReader):
     const reading = reader(paths[i].layer);
     const kind = reading?.kind ?? "outside";
     const isThrough = kind === "outside" || kind === "cut-through";
-    const key = isThrough ? "through" : `${kind} ${JSON.stringify(reading?.depth ?? null)}`;
+    const key = isThrough ? THROUGH : `${kind} ${JSON.stringify(reading?.depth ?? null)}`;
     const held = groups.get(key);
     if (held) held.push(i);
     else groups.set(key, [i]);

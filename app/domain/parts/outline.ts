@@ -25,8 +25,8 @@ export interface Outline {
   readonly members: readonly number[];
 }
 
-/** Chords for containment: a thousandth of the outline's extent, at most 0.05 mm. */
-const chordTolerance = (box: Box): number => Math.min(0.05, Math.max(1e-9, boxExtent(box) * 1e-3));
+/** Chords for containment: two thousandths of the outline's extent, at most 0.05 mm. */
+const chordTolerance = (box: Box): number => Math.min(0.05, Math.max(1e-9, boxExtent(box) * 2e-3));
 
 function outlineOf(chain: Chain): Outline {
   const area = pathArea(chain.path);

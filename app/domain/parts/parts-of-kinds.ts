@@ -1,7 +1,7 @@
 import type { DrawnText } from "../drawing";
-import { flattenPath, interiorPoint, normaliseAngle, smallestRectangle } from "../geometry";
+import { flattenPath, normaliseAngle, smallestRectangle } from "../geometry";
 import type { Kind } from "./congruence";
-import { pointInPolygon } from "./level-line";
+import { pointInMaterial } from "./material-point";
 import { moved } from "./motion";
 import { isThrough, ROUND_SLACK } from "./operations";
 import { circleDiameter } from "./outline";
@@ -9,9 +9,8 @@ import { OutlineIndex } from "./outline-index";
 import type { Part } from "./part";
 import type { Piece } from "./pieces";
 
-/** Chords from which the smallest rectangle is taken, and the coarser ones for the point inside, millimetres. */
+/** Chords from which the smallest rectangle is taken, millimetres. */
 const FINE_CHORD = 0.002;
-const COARSE_CHORD = 0.05;
 /** A name longer than this is a note. */
 const LONGEST_NAME = 60;
 
@@ -47,14 +46,7 @@ function partOf(kind: Kind, id: string, name: string, mirrorOf: string | null): 
   const { outer, features } = kind.first;
   const inner = features.filter(({ kind, path }) => kind !== "engrave" && path.closed);
   const openings = features.filter((feature) => isThrough(feature) && feature.path.closed);
-  const inside =
-    interiorPoint(
-      outer.path,
-      openings.map(({ path }) => path),
-      COARSE_CHORD,
-    ) ??
-    pointInPolygon(outer.polygon) ??
-    outer.polygon[0];
+  const inside = pointInMaterial(outer, openings);
   return {
     id,
     name,
