@@ -1,6 +1,6 @@
 /** `npm run -s inspect -- FILE.dxf`: what is in a drawing, as one JSON document on standard output. */
 import { readFile } from "node:fs/promises";
-import { closePools, runInPool } from "~/jobs/pool.server";
+import { closePool, runInPool } from "~/jobs/pool.server";
 import { type InspectArguments, parseInspectArguments } from "./inspect-arguments";
 import type { InspectInput, InspectOutput } from "./inspect-drawing.worker";
 
@@ -57,6 +57,6 @@ inspect(process.argv.slice(2))
     return FAILED;
   })
   .then(async (code) => {
-    await closePools();
+    closePool();
     process.exitCode = code;
   });
