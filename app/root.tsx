@@ -11,14 +11,16 @@ import { QueryProvider } from "./components/query-provider";
 
 export const middleware: Route.MiddlewareFunction[] = [sessionMiddleware];
 
-export const links: Route.LinksFunction = () =>
-  [publicSans, robotoMono].map((href) => ({
+export const links: Route.LinksFunction = () => [
+  { rel: "icon", href: "/icon.svg", type: "image/svg+xml" },
+  ...[publicSans, robotoMono].map((href) => ({
     rel: "preload",
     href,
-    as: "font",
+    as: "font" as const,
     type: "font/woff2",
-    crossOrigin: "anonymous",
-  }));
+    crossOrigin: "anonymous" as const,
+  })),
+];
 
 export const meta: Route.MetaFunction = () => [{ title: "Kerfpost" }];
 

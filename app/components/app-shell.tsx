@@ -43,15 +43,17 @@ export function AppShell({ nav, who, children, width = "full" }: AppShellProps) 
           <Link to="/" className="rounded-sheet py-1" aria-label="Kerfpost, first page">
             <Wordmark />
           </Link>
-          <nav aria-label="Areas" className="hidden md:block">
-            <ul className="flex flex-wrap gap-x-5.5">
-              {nav.map((item) => (
-                <li key={item.to}>
-                  <AreaLink item={item} />
-                </li>
-              ))}
-            </ul>
-          </nav>
+          {nav.length > 0 && (
+            <nav aria-label="Areas" className="hidden md:block">
+              <ul className="flex flex-wrap gap-x-5.5">
+                {nav.map((item) => (
+                  <li key={item.to}>
+                    <AreaLink item={item} />
+                  </li>
+                ))}
+              </ul>
+            </nav>
+          )}
         </div>
         <div className="hidden shrink-0 md:block md:pt-1.5">
           <WhoIsThere who={who} />
@@ -124,15 +126,17 @@ function PhoneMenu({ nav, who }: { readonly nav: readonly NavItem[]; readonly wh
         <span className="hidden group-open:inline">Close</span>
       </summary>
       <div className="absolute top-full right-0 z-10 w-64 rounded-sheet border border-edge bg-sheet px-4 py-2">
-        <nav aria-label="Areas">
-          <ul>
-            {nav.map((item) => (
-              <li key={item.to} className="py-1">
-                <AreaLink item={item} />
-              </li>
-            ))}
-          </ul>
-        </nav>
+        {nav.length > 0 && (
+          <nav aria-label="Areas">
+            <ul>
+              {nav.map((item) => (
+                <li key={item.to} className="py-1">
+                  <AreaLink item={item} />
+                </li>
+              ))}
+            </ul>
+          </nav>
+        )}
         <div className="mt-2 border-t border-line py-2">
           <WhoIsThere who={who} />
         </div>
