@@ -10,7 +10,7 @@ import { RouterContextProvider } from "react-router";
 import { CLIENT_ADDRESS_HEADER } from "~/auth/auth.server";
 import { closeDatabase } from "~/db/client.server";
 import { migrateDatabase } from "~/db/migrate.server";
-import { closePools } from "~/jobs/pool.server";
+import { closePool } from "~/jobs/pool.server";
 import { startRunners } from "~/jobs/runners.server";
 import { environment } from "./environment.server";
 import { nonceContext } from "./nonce";
@@ -103,7 +103,7 @@ export async function begin(): Promise<{ stop(): Promise<void> }> {
   return {
     async stop() {
       await runners?.stop();
-      await closePools();
+      closePool();
       closeDatabase();
     },
   };

@@ -1,0 +1,44 @@
+/**
+ * `npm run seed`: the invented shop with its people and orders, made through the flows that serve real ones. The
+ * local stand-ins must be running; a shop that is there already is left alone.
+ */
+import { closeDatabase, db, transact } from "~/db/client.server";
+import { migrateDatabase } from "~/db/migrate.server";
+import { insertShop } from "~/db/seed/insert-shop.server";
+import { shiftOrderTimes } from "~/db/seed/shift-times.server";
+import { addDays, dayOf, workingDayFrom } from "~/domain/scheduling";
+import { closePool } from "~/jobs/pool.server";
+import { findOrder } from "~/models/orders.server";
+import { currentSettings, findSettings } from "~/models/settings.server";
+import { afterwards } from "./seed/aftermath";
+import { carryOrder } from "./seed/carry";
+import { demoOrders } from "./seed/orders";
+import { seedPeople } from "./seed/people";
+
+async function seed(): Promise<string> {
+  await migrateDatabase();
+  if (await findSettings(db)) return "The shop is there already; nothing was added.\n";
+  const now = new Date();
+  await transact((tx) => insertShop(tx, now));
+  const people = await seedPeople();
+  const { shop, lead } = await currentSettings(db);
+  const today = dayOf(now, shop.timeZone);
+  const plan = demoOrders(people);
+  for (const { daysAgo, aftermath, ...demo } of plan) {
+    const day = workingDayFrom(addDays(today, demo.to === "scheduled" ? 1 : 0), lead.holidays);
+    const { id } = await carryOrder(demo, { operator: people.operator, clerk: people.clerk, day });
+    const order = await findOrder(db, id, { kind: "staff" });
+    if (aftermath && order) await afterwards(order, aftermath, people);
+    await transact((tx) => shiftOrderTimes(tx, id, daysAgo));
+  }
+  return `Made ${Object.keys(people).length} people and ${plan.length} orders.\n`;
+}
+
+const began = Date.now();
+try {
+  const words = await seed();
+  process.stdout.write(`${words}${((Date.now() - began) / 1000).toFixed(1)} s\n`);
+} finally {
+  closePool();
+  closeDatabase();
+}
