@@ -101,6 +101,8 @@ export function useView(svg: RefObject<SVGSVGElement | null>, box: ViewBox | nul
         event.currentTarget.setPointerCapture(event.pointerId);
       }
       presses.current.set(event.pointerId, { x, y });
+      // One finger on a drawing that is all in view scrolls the page, as it does everywhere else on it.
+      if (!other && moved === null && event.pointerType === "touch") return;
       if (!other) return change((now) => movedView(now, x - before.x, y - before.y));
       const spread = Math.hypot(x - other.x, y - other.y);
       const spreadBefore = Math.hypot(before.x - other.x, before.y - other.y);
