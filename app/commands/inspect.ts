@@ -1,6 +1,6 @@
 /** `npm run -s inspect -- FILE.dxf`: what is in a drawing, as one JSON document on standard output. */
 import { readFile } from "node:fs/promises";
-import { closePool, runInPool } from "~/jobs/pool.server";
+import { Piscina } from "piscina";
 import { type InspectArguments, parseInspectArguments } from "./inspect-arguments";
 import type { InspectInput, InspectOutput } from "./inspect-drawing.worker";
 
@@ -8,6 +8,7 @@ const DONE = 0;
 const FAILED = 1;
 const UNUSABLE = 2;
 const TIME_LIMIT_MS = 30_000;
+const HEAP_LIMIT_MB = 1024;
 const LARGEST_BYTES = 32 * 1024 * 1024;
 
 async function inspect(given: readonly string[]): Promise<number> {
@@ -17,21 +18,34 @@ async function inspect(given: readonly string[]): Promise<number> {
   const bytes = await readBytes(file);
   if (typeof bytes === "string") return refuse(bytes);
 
-  const input: InspectInput = { bytes, unit, thickness };
-  const worker = new URL("./inspect-drawing.worker.ts", import.meta.url).href;
-  const outcome = await runInPool<InspectOutput>({ file: worker, input, timeLimitMs: TIME_LIMIT_MS });
-  if (!outcome.ok) {
-    if (outcome.reason === "too-long") return refuse("Reading the drawing took too long; it may be damaged.");
-    if (outcome.reason === "too-much-memory")
-      return refuse("The drawing needs more memory than reading is given.");
-    console.error(`Our own failure: ${outcome.detail}`);
-    return FAILED;
-  }
-  const { result } = outcome;
+  const result = await inspectInThread({ bytes, unit, thickness });
   if (!result.ok) return refuse(result.reason);
   for (const note of result.notes) console.error(note);
   process.stdout.write(`${result.json}\n`);
   return DONE;
+}
+
+/**
+ * Reads in a thread of this process, so that a drawing that hangs reading or fills the memory is refused in words.
+ * The server's pool is not used: its hosts are processes of their own, which a command need not wait for.
+ */
+async function inspectInThread(input: InspectInput): Promise<InspectOutput> {
+  const pool = new Piscina<InspectInput, InspectOutput>({
+    filename: new URL("./inspect-drawing.worker.ts", import.meta.url).href,
+    maxThreads: 1,
+    resourceLimits: { maxOldGenerationSizeMb: HEAP_LIMIT_MB },
+  });
+  const limit = AbortSignal.timeout(TIME_LIMIT_MS);
+  try {
+    return await pool.run(input, { signal: limit });
+  } catch (error) {
+    if (limit.aborted) return { ok: false, reason: "Reading the drawing took too long; it may be damaged." };
+    if (error instanceof Error && "code" in error && error.code === "ERR_WORKER_OUT_OF_MEMORY")
+      return { ok: false, reason: "The drawing needs more memory than reading is given." };
+    throw error;
+  } finally {
+    await pool.destroy();
+  }
 }
 
 function refuse(reason: string): number {
@@ -56,7 +70,6 @@ inspect(process.argv.slice(2))
     console.error(error);
     return FAILED;
   })
-  .then(async (code) => {
-    closePool();
+  .then((code) => {
     process.exitCode = code;
   });
