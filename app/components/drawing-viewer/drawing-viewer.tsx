@@ -144,11 +144,7 @@ export function DrawingViewer({
         unit={unit}
         onUnit={changeUnit}
         onFit={pane.fit}
-        setAside={
-          geometry.setAside.length > 0
-            ? { shown: asideShown, count: geometry.setAside.length, onShow: setAsideShown }
-            : null
-        }
+        setAside={geometry.setAside.length > 0 ? { shown: asideShown, onShow: setAsideShown } : null}
       />
       <p id={across.keys} className="sr-only">
         Arrow keys move the drawing, plus and minus change its size, 0 fits it. Tab goes through the parts,

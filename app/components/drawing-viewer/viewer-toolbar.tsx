@@ -20,7 +20,7 @@ interface ViewerToolbarProps {
   /** Null where the drawing has nothing set aside. */
   readonly setAside: {
     readonly shown: boolean;
-    readonly count: number;
+
     readonly onShow: (shown: boolean) => void;
   } | null;
 }
