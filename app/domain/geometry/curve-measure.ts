@@ -5,7 +5,7 @@ import { ellipseExtremes, ellipseLength, ellipsePoint, ellipseTangent } from "./
 import { distance, subtract } from "./point";
 import { splineBox, splineDomain, splineLength, splinePoint, splineTangent } from "./spline";
 
-/** Exact for lines and arcs; for ellipses and splines to 1e-9 of their size. */
+/** Exact for lines and arcs; for ellipses and splines to 1e-9 of their size, 1e-6 where a spline has a cusp. */
 export function curveLength(curve: Curve): number {
   switch (curve.kind) {
     case "line":

@@ -133,7 +133,7 @@ function controlLength(spline: Spline): number {
   return length;
 }
 
-/** By quadrature on each knot span, to 1e-9 of the control polygon's length. */
+/** By quadrature on each knot span, to 1e-9 of the control polygon's length (1e-6 at a cusp between nodes). */
 export const splineLength = (spline: Spline): number =>
   integrateSpans(spline, ({ tangent }) => Math.hypot(tangent.x, tangent.y), 1e-9 * controlLength(spline));
 
