@@ -2,7 +2,13 @@ import { index, layout, prefix, type RouteConfig, route } from "@react-router/de
 
 /** The URL map. One block an area; a page lies in `routes/<area>/<page>.tsx`. */
 export default [
-  layout("routes/public/layout.tsx", [index("routes/public/home.tsx")]),
+  layout("routes/public/layout.tsx", [
+    index("routes/public/home.tsx"),
+    route("sign-in", "routes/public/sign-in.tsx"),
+    route("sign-up", "routes/public/sign-up.tsx"),
+  ]),
+
+  route("sign-out", "routes/account/sign-out.ts"),
 
   ...prefix("api", [
     route("uploads", "routes/api/uploads.ts"),

@@ -1,4 +1,4 @@
-import { db } from "~/db/client.server";
+import type { Executor } from "~/db/client.server";
 import { resetMail, verificationMail } from "~/documents/mails/account";
 import { queueMail } from "~/models/outbox.server";
 import { findSettings } from "~/models/settings.server";
@@ -12,16 +12,26 @@ interface Recipient {
 /** What mails sign with before the shop is set up. */
 const PRODUCT = "Kerfpost";
 
-const shopName = async (): Promise<string> => (await findSettings(db))?.content.shop.name ?? PRODUCT;
+/** The shop's name, as mails sign. */
+export const shopName = async (executor: Executor): Promise<string> =>
+  (await findSettings(executor))?.content.shop.name ?? PRODUCT;
 
-export async function mailVerification({ name, email }: Recipient, token: string): Promise<void> {
+export async function mailVerification(
+  executor: Executor,
+  { name, email }: Recipient,
+  token: string,
+): Promise<void> {
   const url = `${environment.APP_URL}/verify-email?token=${encodeURIComponent(token)}`;
-  const mail = verificationMail({ shopName: await shopName(), recipientName: name, url });
-  await queueMail(db, { recipient: email, template: "verification", ...mail });
+  const mail = verificationMail({ shopName: await shopName(executor), recipientName: name, url });
+  await queueMail(executor, { recipient: email, template: "verification", ...mail });
 }
 
-export async function mailReset({ name, email }: Recipient, token: string): Promise<void> {
+export async function mailReset(
+  executor: Executor,
+  { name, email }: Recipient,
+  token: string,
+): Promise<void> {
   const url = `${environment.APP_URL}/reset-password?token=${encodeURIComponent(token)}`;
-  const mail = resetMail({ shopName: await shopName(), recipientName: name, url });
-  await queueMail(db, { recipient: email, template: "reset", ...mail });
+  const mail = resetMail({ shopName: await shopName(executor), recipientName: name, url });
+  await queueMail(executor, { recipient: email, template: "reset", ...mail });
 }

@@ -1,14 +1,14 @@
 import { betterAuth } from "better-auth";
 import { drizzleAdapter } from "better-auth/adapters/drizzle";
+import { createEmailVerificationToken } from "better-auth/api";
 import { db } from "~/db/client.server";
 import * as schema from "~/db/schema";
 import { environment } from "~/server/environment.server";
 import { mailReset, mailVerification } from "./auth-mails.server";
+import { PASSWORD_MAX, PASSWORD_MIN } from "./password-rules";
 
 /** The header the server sets itself from the connection; what a client sends under this name is overwritten. */
 export const CLIENT_ADDRESS_HEADER = "x-kerfpost-client";
-export const PASSWORD_MIN = 10;
-export const PASSWORD_MAX = 128;
 const DAY = 24 * 60 * 60;
 
 function createAuth() {
@@ -30,15 +30,14 @@ function createAuth() {
       enabled: true,
       minPasswordLength: PASSWORD_MIN,
       maxPasswordLength: PASSWORD_MAX,
-      autoSignIn: true,
+      autoSignIn: false,
       revokeSessionsOnPasswordReset: true,
       resetPasswordTokenExpiresIn: 60 * 60,
-      sendResetPassword: ({ user, token }) => mailReset(user, token),
+      sendResetPassword: ({ user, token }) => mailReset(db, user, token),
     },
     emailVerification: {
-      sendOnSignUp: true,
       expiresIn: DAY,
-      sendVerificationEmail: ({ user, token }) => mailVerification(user, token),
+      sendVerificationEmail: ({ user, token }) => mailVerification(db, user, token),
     },
     session: { expiresIn: 30 * DAY, updateAge: DAY },
     advanced: {
@@ -61,3 +60,7 @@ export function auth(): ReturnType<typeof createAuth> {
   shelf.kerfpostAuth ??= createAuth();
   return shelf.kerfpostAuth;
 }
+
+/** What the mailed link that confirms an address carries; good for one day. */
+export const verificationToken = (email: string): Promise<string> =>
+  createEmailVerificationToken(environment.AUTH_SECRET, email, undefined, DAY);

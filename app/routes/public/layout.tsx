@@ -1,26 +1,14 @@
-import { Outlet } from "react-router";
+import { areaFacts } from "~/auth/area-facts.server";
 import { currentPerson } from "~/auth/session.server";
-import { AppShell } from "~/components/app-shell";
-import { ErrorPanel } from "~/components/error-panel";
+import { AreaError, AreaFrame } from "~/components/area-frame";
 import type { Route } from "./+types/layout";
 
 export async function loader({ context }: Route.LoaderArgs) {
-  const person = await currentPerson(context);
-  return { name: person?.name ?? null };
+  return areaFacts(await currentPerson(context));
 }
 
-export default function PublicLayout() {
-  return (
-    <AppShell nav={[]} who={null} width="read">
-      <Outlet />
-    </AppShell>
-  );
+export default function PublicLayout({ loaderData }: Route.ComponentProps) {
+  return <AreaFrame facts={loaderData} />;
 }
 
-export function ErrorBoundary({ error }: Route.ErrorBoundaryProps) {
-  return (
-    <AppShell nav={[]} who={null} width="read">
-      <ErrorPanel error={error} />
-    </AppShell>
-  );
-}
+export const ErrorBoundary = AreaError;
