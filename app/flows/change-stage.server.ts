@@ -17,6 +17,8 @@ export interface StageChange {
   readonly undoes?: string | null | undefined;
   /** When pieces moved: which, and between which of their own stages. The audit row then names these. */
   readonly pieces?: { readonly ids: readonly string[]; readonly from: PieceStage; readonly to: PieceStage };
+  /** When the order stays on hold and what it goes on to changes underneath. */
+  readonly underHold?: { readonly from: Stage; readonly to: Stage };
   /** What else changes on the order with it. */
   readonly change?: OrderChange;
 }
@@ -36,8 +38,8 @@ export async function changeStage(tx: Executor, move: StageChange): Promise<Verd
   const recorded = await insertStageMove(tx, {
     orderId: order.id,
     pieceIds: pieces ? [...pieces.ids] : null,
-    from: pieces?.from ?? order.stage,
-    to: pieces?.to ?? to,
+    from: pieces?.from ?? move.underHold?.from ?? order.stage,
+    to: pieces?.to ?? move.underHold?.to ?? to,
     act: move.act,
     actorId: move.by.id,
     actorRole: move.by.role,

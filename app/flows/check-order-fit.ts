@@ -9,16 +9,21 @@ export interface FitStockOf {
   readonly sheet: { readonly length: number; readonly width: number };
 }
 
+/** A finding with the drawing it is in: letters of parts and places are of one drawing only. */
+export interface FileFinding extends Finding {
+  readonly fileSha: string;
+}
+
 /** What the fit says of every file of an order on the stock chosen for it, files in their order. */
 export function checkOrderFit(
   files: readonly FileReport[],
   stocks: readonly FitStockOf[],
   { fit, nesting }: Pick<ShopSettings, "fit" | "nesting">,
-): Finding[] {
+): FileFinding[] {
   return files.flatMap(({ sha256, report }) => {
     const stock = stocks.find((one) => one.parts.some((part) => part.fileSha === sha256));
     if (!stock) return [];
-    return checkFit({
+    const found = checkFit({
       report,
       stock: {
         thickness: stock.thickness,
@@ -33,5 +38,6 @@ export function checkOrderFit(
         thinnestFloor: fit.thinnestFloor,
       },
     });
+    return found.map((finding) => ({ ...finding, fileSha: sha256 }));
   });
 }

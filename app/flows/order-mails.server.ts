@@ -52,7 +52,12 @@ async function mailBuilder(
 
 export const mailQuote = (
   tx: Executor,
-  { order, quote, review }: { order: Order; quote: Quote; review: readonly string[] },
+  {
+    order,
+    quote,
+    review,
+    questions,
+  }: { order: Order; quote: Quote; review: readonly string[]; questions: number },
 ): Promise<void> =>
   mailBuilder(
     tx,
@@ -67,6 +72,7 @@ export const mailQuote = (
         expiresAt: quote.expiresAt,
         promisedFor: quote.promisedFor,
         review,
+        questions,
       }),
     `quote:${quote.id}`,
   );

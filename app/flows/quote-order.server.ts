@@ -24,7 +24,7 @@ import { promiseOrder } from "./promise-order.server";
 import { collectFacts, type StockPlan } from "./quote-facts.server";
 import { sendToReview } from "./send-to-review.server";
 import { answering, CHANGED, NO_ORDER, orRollBack, Refused, refuse, type Verdict } from "./verdict";
-import { type QuoteContent, reviewReasons, writeQuote } from "./write-quote.server";
+import { personReasons, type QuoteContent, questionReasons, writeQuote } from "./write-quote.server";
 
 export interface QuoteOptions extends MoveOptions {
   readonly now?: Date;
@@ -183,14 +183,15 @@ async function freeze(
       },
     }),
   );
-  const review = reviewReasons({
+  const questions = prepared.findings.filter((finding) => finding.severity === "ask").length;
+  const person = personReasons({
     total: quote.total,
     settings: prepared.settings,
     reviewAsked: quoted.reviewAsked,
-    openAsks: prepared.findings.filter((finding) => finding.severity === "ask").length,
   });
+  const review = [...person, ...questionReasons(questions)];
   const last = review.length > 0 ? await sendToReview(tx, quoted, review) : quoted;
-  await mailQuote(tx, { order: last, quote, review });
+  await mailQuote(tx, { order: last, quote, review: person, questions });
   return { ...answerMove(last), quote, review };
 }
 

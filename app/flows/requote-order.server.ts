@@ -12,13 +12,14 @@ import { scopeOfActor } from "./actor";
 import { closeOpenCheckout } from "./close-checkout.server";
 import type { ListedPart } from "./listed-parts";
 import type { Moved, MoveOptions } from "./move.server";
+import { factsOfOrder } from "./order-facts.server";
 import { mailQuote } from "./order-mails.server";
 import { deliveryOf } from "./price-order.server";
 import { promiseOrder } from "./promise-order.server";
 import { collectFacts } from "./quote-facts.server";
 import { sendToReview } from "./send-to-review.server";
 import { answering, CHANGED, NO_ORDER, Refused, refuse, type Verdict } from "./verdict";
-import { type QuoteContent, reviewReasons, writeQuote } from "./write-quote.server";
+import { personReasons, type QuoteContent, writeQuote } from "./write-quote.server";
 
 export type Requoted = Moved & {
   readonly quote: Quote;
@@ -67,10 +68,11 @@ async function requote(
   if (!changed) throw new Refused(CHANGED);
   const review =
     order.reviewedAt === null || quote.total > old.total
-      ? reviewReasons({ total: quote.total, settings, reviewAsked: false, openAsks: 0 })
+      ? personReasons({ total: quote.total, settings, reviewAsked: false })
       : [];
   const last = review.length > 0 ? await sendToReview(tx, changed, review) : changed;
-  await mailQuote(tx, { order: last, quote, review });
+  const { unansweredAsks } = await factsOfOrder(tx, last, now);
+  await mailQuote(tx, { order: last, quote, review, questions: unansweredAsks });
   return {
     ok: true,
     order: last,

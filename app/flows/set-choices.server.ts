@@ -12,7 +12,9 @@ export interface SetChoicesOptions {
   /** The number of the interpretation that the change was made from. */
   readonly after: number;
   readonly files?: readonly (Pick<FileInterpretation, "sha256"> &
-    Partial<Pick<FileInterpretation, "unit" | "materialId" | "lotId" | "sets">>)[];
+    Partial<Pick<FileInterpretation, "unit" | "layers" | "materialId" | "lotId" | "sets">>)[];
+  /** Parts that get a name or a grain direction of their own. */
+  readonly parts?: Interpretation["parts"];
   readonly sanding?: Interpretation["sanding"];
   readonly leaveTabs?: boolean;
 }
@@ -33,6 +35,7 @@ export async function setChoices(options: SetChoicesOptions): Promise<Verdict<{ 
       ...content,
       sanding: options.sanding ?? content.sanding,
       leaveTabs: options.leaveTabs ?? content.leaveTabs,
+      parts: withParts(content.parts, options.parts ?? []),
       files: content.files.map((file) => {
         const chosen = options.files?.find(({ sha256 }) => sha256 === file.sha256);
         const changed = { ...file, ...chosen };
@@ -43,4 +46,15 @@ export async function setChoices(options: SetChoicesOptions): Promise<Verdict<{ 
       }),
     },
   });
+}
+
+/** The later choice for a part stands in place of the earlier one. */
+function withParts(
+  earlier: Interpretation["parts"],
+  later: Interpretation["parts"],
+): Interpretation["parts"] {
+  const kept = earlier.filter(
+    (part) => !later.some(({ sha256, letter }) => sha256 === part.sha256 && letter === part.letter),
+  );
+  return [...kept, ...later];
 }

@@ -128,6 +128,7 @@ async function markOrderPaid(tx: Executor, order: Order): Promise<void> {
       to: held ? "on-hold" : "paid",
       act: "pay",
       by: { id: null, role: "system" },
+      ...(held ? { underHold: { from: "quoted", to: "paid" } } : {}),
       change: { paidAt: at, ...(held ? { heldFrom: "paid" } : {}) },
     }),
   );

@@ -58,22 +58,25 @@ export async function dropQuotes(tx: Executor, orderId: string): Promise<void> {
 }
 
 /** Why a person must look before this quote can be paid; empty when none must. */
-export function reviewReasons({
+export const personReasons = ({
   total,
   settings,
   reviewAsked,
-  openAsks,
 }: {
   total: number;
   settings: ShopSettings;
   reviewAsked: boolean;
-  openAsks: number;
-}): string[] {
+}): string[] => [
+  ...(total > settings.review.cap ? ["the total is above what is priced without a person"] : []),
+  ...(reviewAsked ? ["the builder asked for it"] : []),
+];
+
+/** The same for questions about the drawing that the builder has not answered. */
+export const questionReasons = (openAsks: number): string[] => {
+  if (openAsks === 0) return [];
   return [
-    ...(total > settings.review.cap ? ["the total is above what is priced without a person"] : []),
-    ...(reviewAsked ? ["the builder asked for it"] : []),
-    ...(openAsks > 0
-      ? [`${openAsks} ${openAsks === 1 ? "question" : "questions"} about the drawing wait for an answer`]
-      : []),
+    openAsks === 1
+      ? "a question about the drawing waits for its answer"
+      : `${openAsks} questions about the drawing wait for their answers`,
   ];
-}
+};

@@ -10,6 +10,8 @@ export interface QuoteMailFacts extends OrderMailFacts {
   readonly promisedFor: Date;
   /** Why a person looks first; empty when it can be paid at once. */
   readonly review: readonly string[];
+  /** About the drawing, for the builder to answer before paying. */
+  readonly questions: number;
 }
 
 export function quoteMail(facts: QuoteMailFacts): Mail {
@@ -21,6 +23,11 @@ export function quoteMail(facts: QuoteMailFacts): Mail {
       : `Quote ${facts.quoteNumber} for ${facts.reference}: ${total}`,
     paragraphs: [
       `${facts.reference} (${facts.orderName}) comes to ${total}. The price holds until ${mailDay(facts.expiresAt, facts.timeZone)}.`,
+      ...(facts.questions > 0
+        ? [
+            `${facts.questions === 1 ? "A question" : `${facts.questions} questions`} about the drawing ${facts.questions === 1 ? "waits" : "wait"} for your answer before it can be paid.`,
+          ]
+        : []),
       waits
         ? `Before it can be paid a person in the shop looks at it, because ${facts.review.join("; ")}. You are told as soon as that is done.`
         : `Paid by then, it leaves the shop by ${mailDay(facts.promisedFor, facts.timeZone)}. Look through the part list and its sizes before you approve them: the design stays your responsibility.`,
