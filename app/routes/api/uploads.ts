@@ -6,7 +6,7 @@ import {
   MaxTotalSizeExceededError,
   parseFormData,
 } from "@remix-run/form-data-parser";
-import { requireAct } from "~/auth/guards.server";
+import { requireAct, requireOrder } from "~/auth/guards.server";
 import { requireSameOrigin } from "~/auth/same-origin.server";
 import { db } from "~/db/client.server";
 import { uploadDrawing } from "~/flows/upload-drawing.server";
@@ -39,7 +39,9 @@ export async function action(args: Route.ActionArgs) {
   const { request } = args;
   requireSameOrigin(request);
   let orderId = new URL(request.url).searchParams.get("orderId");
-  const person = await requireAct(args, orderId ? "order.edit" : "order.create");
+  const person = orderId
+    ? (await requireOrder(args, "order.edit", orderId)).person
+    : await requireAct(args, "order.create");
   const token = await takeToken(db, `upload:${person.id}`, UPLOADS.limit, UPLOADS.windowSeconds);
   if (!token.ok)
     return reply(429, { orderId, files: [], reason: "That is a lot of uploads. Wait a few minutes." }, token);
