@@ -1,4 +1,5 @@
 import { setTimeout as pause } from "node:timers/promises";
+import { reconcilePayments } from "~/flows/reconcile-payments.server";
 import { jobHandlers } from "./handlers.server";
 import { sendNextMail } from "./outbox.server";
 import { runNextJob } from "./run-job.server";
@@ -13,10 +14,12 @@ export interface Runners {
 const JOB_RUNNERS = 2;
 const JOB_POLL_MS = 500;
 const MAIL_POLL_MS = 1_000;
+/** How often the payment service is asked about what may have been missed. */
+const PAYMENTS_EVERY_MS = 60_000;
 /** After an error of the database itself. */
 const PAUSE_MS = 2_000;
 
-/** Starts this process's runners of jobs and of outgoing mail. */
+/** Starts this process's runners of jobs, of outgoing mail and of payments whose news was missed. */
 export function startRunners(): Runners {
   const stopping = new AbortController();
   const loops = [
@@ -24,12 +27,24 @@ export function startRunners(): Runners {
       loop(() => runNextJob(jobHandlers), JOB_POLL_MS, stopping.signal),
     ),
     loop(() => sendNextMail(), MAIL_POLL_MS, stopping.signal),
+    loop(every(PAYMENTS_EVERY_MS, reconcilePayments), PAYMENTS_EVERY_MS, stopping.signal),
   ];
   return {
     async stop() {
       stopping.abort();
       await Promise.all(loops);
     },
+  };
+}
+
+/** At most once in `ms`, however often the runner is woken in between. */
+function every(ms: number, work: () => Promise<unknown>): () => Promise<boolean> {
+  let next = 0;
+  return async () => {
+    if (Date.now() < next) return false;
+    next = Date.now() + ms;
+    await work();
+    return false;
   };
 }
 
