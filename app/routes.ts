@@ -6,6 +6,11 @@ export default [
     index("routes/public/home.tsx"),
     route("sign-in", "routes/public/sign-in.tsx"),
     route("sign-up", "routes/public/sign-up.tsx"),
+    route("forgot-password", "routes/public/forgot-password.tsx"),
+    route("reset-password", "routes/public/reset-password.tsx"),
+    route("verify-email", "routes/public/verify-email.tsx"),
+    route("invitation/:token", "routes/public/invitation.tsx"),
+    route("terms", "routes/public/terms.tsx"),
   ]),
 
   route("sign-out", "routes/account/sign-out.ts"),
