@@ -49,6 +49,7 @@ export async function startProduct({ directory, ports, say = () => undefined, en
   const url = at(ports.product);
   const environment = {
     NODE_ENV: "production",
+    NODE_NO_WARNINGS: "1",
     HOST: "127.0.0.1",
     PORT: String(ports.product),
     APP_URL: url,

@@ -168,7 +168,8 @@ async function choose(demo: DemoOrder, orderId: string): Promise<void> {
 async function quote(demo: DemoOrder, orderId: string, shop: Shop, settle: boolean): Promise<void> {
   const { builder } = demo;
   must(await quoteOrder({ actor: builder, orderId, version: await versionOf(orderId) }));
-  if (demo.askReview) must(await askReview({ actor: builder, orderId, version: await versionOf(orderId) }));
+  if (demo.askReview && (await orderOf(orderId)).stage === "quoted")
+    must(await askReview({ actor: builder, orderId, version: await versionOf(orderId) }));
   if (!settle) return;
   const { revisionId } = await orderOf(orderId);
   for (const finding of revisionId ? await listFindings(db, revisionId) : [])
