@@ -16,8 +16,8 @@ const LONGEST_NAME = 60;
 
 /** The kinds as parts: the largest first, named by the one text that stands in them, else by their letters. */
 export function partsOfKinds(kinds: readonly Kind[], texts: readonly DrawnText[]): Part[] {
-  // A twin goes by its original's area, so that rounding never puts it first.
-  const areaOf = (k: number) => kinds[kinds[k].mirrorOf ?? k].first.outer.area;
+  // To a thousandth of a square millimetre, and a twin by its original's, so that rounding decides no order.
+  const areaOf = (k: number) => Math.round(kinds[kinds[k].mirrorOf ?? k].first.outer.area * 1000);
   const order = Array.from(kinds.keys()).sort((i, j) => areaOf(j) - areaOf(i) || i - j);
   const ids = new Map(order.map((kind, place) => [kind, partLetters(place)]));
   const names = textsByPiece(kinds, texts);

@@ -20,7 +20,7 @@ const CREST = 0.02;
 /** Peaks this much lower than the farthest are still tried, since equal parts may differ by the tolerance. */
 const LOWER_PEAK = 0.15;
 /** Chords longer than this, millimetres, are probed in the middle as well. */
-const LONG_CHORD = 1;
+const LONG_CHORD = 0.2;
 /** Outlines that enclose less, since they cross themselves, have no centre of area to speak of. Square millimetres. */
 const LEAST_AREA = 1e-3;
 const MOST_ANCHORS = 360;
@@ -152,7 +152,7 @@ export interface Anchors {
  */
 export function anchorsOf({ outer, features }: Shape): Anchors {
   if (outer.radius === null) {
-    const angles = peaksOf(outer.chords.points, outer.centre);
+    const angles = peaksOf(outer.probes, outer.centre);
     if (angles) return { angles };
   }
   const offCentre = features
@@ -165,8 +165,8 @@ export function anchorsOf({ outer, features }: Shape): Anchors {
       .slice(0, MOST_ANCHORS);
     return { angles: near.map(({ centre }) => angleFrom(outer.centre, centre)) };
   }
-  for (const { radius, chords } of features) {
-    const angles = radius === null ? peaksOf(chords.points, outer.centre) : null;
+  for (const { radius, probes } of features) {
+    const angles = radius === null ? peaksOf(probes, outer.centre) : null;
     if (angles) return { angles };
   }
   return { angles: [0] };
