@@ -17,6 +17,14 @@ export const events = sqliteTable(
   (table) => [index("events_order").on(table.orderId, table.id)],
 );
 
+export interface MailPayload {
+  readonly subject: string;
+  readonly text: string;
+  readonly html: string;
+  /** Where the recipient turns this kind of mail off; absent for the necessary ones. */
+  readonly unsubscribeUrl?: string;
+}
+
 /** Mails (and later webhooks) written in the transaction that causes them and sent from here with retries. */
 export const outbox = sqliteTable(
   "outbox",
@@ -25,7 +33,7 @@ export const outbox = sqliteTable(
     kind: text().$type<"mail">().notNull(),
     recipient: text().notNull(),
     template: text().notNull(),
-    payload: text({ mode: "json" }).$type<{ subject: string; text: string; html: string }>().notNull(),
+    payload: text({ mode: "json" }).$type<MailPayload>().notNull(),
     orderId: text(),
     status: text().$type<"pending" | "sent" | "failed" | "bounced">().notNull().default("pending"),
     attempts: integer().notNull().default(0),
@@ -34,10 +42,17 @@ export const outbox = sqliteTable(
     lastError: text(),
     /** The same cause writes one mail. */
     dedupeKey: text().unique(),
+    /** The mail that this one says again, by the owner's hand. */
+    resendOf: text(),
     sentAt: instant(),
     createdAt: createdAt(),
   },
-  (table) => [index("outbox_due").on(table.status, table.nextAttemptAt)],
+  (table) => [
+    index("outbox_due").on(table.status, table.nextAttemptAt),
+    index("outbox_order").on(table.orderId, table.createdAt),
+    index("outbox_time").on(table.createdAt),
+    index("outbox_resend").on(table.resendOf),
+  ],
 );
 
 /** Long work, leased with a fence: only the runner that holds the newest fence may finish a job. */
