@@ -13,7 +13,19 @@ export default [
     route("terms", "routes/public/terms.tsx"),
   ]),
 
+  layout("routes/account/layout.tsx", [
+    ...prefix("account", [
+      index("routes/account/profile.tsx"),
+      route("addresses", "routes/account/addresses.tsx"),
+      route("password", "routes/account/password.tsx"),
+      route("sessions", "routes/account/sessions.tsx"),
+    ]),
+  ]),
   route("sign-out", "routes/account/sign-out.ts"),
+
+  layout("routes/shop/layout.tsx", [...prefix("shop", [index("routes/shop/queue.tsx")])]),
+
+  layout("routes/owner/layout.tsx", [...prefix("owner", [route("staff", "routes/owner/staff.tsx")])]),
 
   ...prefix("api", [
     route("uploads", "routes/api/uploads.ts"),
