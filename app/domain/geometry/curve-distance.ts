@@ -1,10 +1,9 @@
 import { sweepContains } from "./arc";
-import { distancePointToBox } from "./box";
 import type { Curve, EllipseArc, Point, Spline } from "./curve";
 import { endOf, startOf } from "./curve-measure";
 import { ellipsePoint } from "./ellipse";
 import { angleOf, distance, distanceToSegment, subtract } from "./point";
-import { bezierEnd, bezierHalves, bezierHullBox, bezierStart, splineBeziers } from "./spline";
+import { type Bezier, bezierBulk, bezierEnd, bezierHalves, bezierStart, splineBeziers } from "./spline";
 
 /** Shortest distance from the point to the curve, its ends included; within `tolerance` for ellipses and splines. */
 export function distancePointToCurve(curve: Curve, point: Point, tolerance = 1e-9): number {
@@ -66,27 +65,29 @@ function goldenMinimum(value: (t: number) => number, from: number, to: number, t
   return Math.min(atInner, atOuter);
 }
 
-/** Halves the pieces whose hull could still be nearer; at most 20,000 halvings. */
+/** A Bézier piece with the least distance it can have: its hull lies within `bulk` of its chord. */
+function bounded(bezier: Bezier, point: Point) {
+  const [from, to] = [bezierStart(bezier), bezierEnd(bezier)];
+  const toChord = distanceToSegment(point, from, to);
+  const bulk = bezierBulk(bezier);
+  return { bezier, toChord, bulk, least: toChord - bulk };
+}
+
+/** Halves the pieces that could still be nearer until they are their chords within the tolerance; at most 20,000 times. */
 function distanceToSpline(spline: Spline, point: Point, tolerance: number): number {
-  const pieces = splineBeziers(spline);
-  let best = distance(point, bezierStart(pieces[0]));
-  for (const piece of pieces) best = Math.min(best, distance(point, bezierEnd(piece)));
-  const bounded = pieces.map((bezier) => ({
-    bezier,
-    least: distancePointToBox(bezierHullBox(bezier), point),
-  }));
-  const pending = bounded.sort((p, q) => q.least - p.least);
+  const pending = splineBeziers(spline).map((bezier) => bounded(bezier, point));
+  let best = pending.reduce((least, { toChord, bulk }) => Math.min(least, toChord + bulk), Infinity);
   let halvings = 0;
-  for (let next = pending.pop(); next && halvings < 20_000; next = pending.pop()) {
-    if (next.least >= best - tolerance) continue;
+  for (let next = pending.pop(); next; next = pending.pop()) {
+    if (next.least >= best) continue;
+    if (next.bulk <= tolerance || halvings >= 20_000) {
+      best = Math.min(best, next.toChord);
+      continue;
+    }
     halvings++;
-    const halves = bezierHalves(next.bezier);
-    best = Math.min(best, distance(point, bezierEnd(halves[0])));
-    const both = halves.map((bezier) => ({
-      bezier,
-      least: distancePointToBox(bezierHullBox(bezier), point),
-    }));
-    pending.push(...both.sort((p, q) => q.least - p.least));
+    const halves = bezierHalves(next.bezier).map((half) => bounded(half, point));
+    for (const { toChord, bulk } of halves) best = Math.min(best, toChord + bulk);
+    pending.push(...halves.sort((p, q) => q.toChord - p.toChord));
   }
   return best;
 }

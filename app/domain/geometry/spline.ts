@@ -165,6 +165,12 @@ const plain = ({ x, y, w }: Weighted): Point => ({ x: x / w, y: y / w });
 /** The box of the control points, which holds the curve. */
 export const bezierHullBox = (bezier: Bezier): Box => boxOfPoints(bezier.map(plain));
 
+/** How far the control points, and so the curve, stray from the chord. */
+export function bezierBulk(bezier: Bezier): number {
+  const [from, to] = [bezierStart(bezier), bezierEnd(bezier)];
+  return bezier.reduce((most, w) => Math.max(most, distanceToSegment(plain(w), from, to)), 0);
+}
+
 /** De Casteljau at the middle. */
 export function bezierHalves(bezier: Bezier): readonly [Bezier, Bezier] {
   const left: Weighted[] = [];
@@ -212,10 +218,8 @@ export function splineFlatten(spline: Spline, tolerance: number): Point[] {
   for (const first of beziers) {
     const pending = [{ bezier: first, depth: 0 }];
     for (let next = pending.pop(); next; next = pending.pop()) {
-      const from = bezierStart(next.bezier);
-      const to = bezierEnd(next.bezier);
-      if (next.depth >= 14 || next.bezier.every((w) => distanceToSegment(plain(w), from, to) <= tolerance)) {
-        points.push(to);
+      if (next.depth >= 14 || bezierBulk(next.bezier) <= tolerance) {
+        points.push(bezierEnd(next.bezier));
         continue;
       }
       const [left, right] = bezierHalves(next.bezier);
