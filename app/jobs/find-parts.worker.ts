@@ -4,6 +4,9 @@ import { type Drawing, scaleDrawing } from "~/domain/drawing";
 import { findParts, type LayerRule } from "~/domain/parts";
 import type { LengthUnit } from "~/domain/units";
 
+/** Of gzip: half the time of its standard for some more bytes. */
+const FAST = 2;
+
 export interface FindPartsInput {
   /** A drawing as stored by its reading: gzipped JSON, in its own coordinates. */
   readonly drawing: Uint8Array;
@@ -16,5 +19,5 @@ export interface FindPartsInput {
 export default function findPartsTask({ drawing, unit, layers }: FindPartsInput): Uint8Array {
   const read: Drawing = JSON.parse(gunzipSync(drawing).toString("utf8"));
   const report = findParts(scaleDrawing(read, unit), { layers });
-  return gzipSync(canonicalJson(report));
+  return gzipSync(canonicalJson(report), { level: FAST });
 }

@@ -12,6 +12,14 @@ const MOST_ATTEMPTS = 16;
 /** The domain part of Message-IDs; the outbox id before it is unique by itself. */
 const MESSAGE_ID_DOMAIN = "mail.kerfpost.invalid";
 
+/** RFC 3834, 5: absence notices are not sent to what a machine wrote. */
+const NO_AUTOMATIC_ANSWER = { "Auto-Submitted": "auto-generated" };
+/** RFC 2369 and RFC 8058: a mail program offers the link, and takes it by one POST without asking the person in. */
+const unsubscribing = (url: string) => ({
+  "List-Unsubscribe": `<${url}>`,
+  "List-Unsubscribe-Post": "List-Unsubscribe=One-Click",
+});
+
 /**
  * Sends the mail that is due first. False when none is due. A mail leaves at least once: its Message-ID is the same
  * at every attempt, so that a second copy can be told.
@@ -19,9 +27,16 @@ const MESSAGE_ID_DOMAIN = "mail.kerfpost.invalid";
 export async function sendNextMail(now: () => Date = () => new Date()): Promise<boolean> {
   const [leased] = await leaseMails(db, { now: now(), leaseMs: LEASE_MS, limit: 1 });
   if (!leased) return false;
-  const { subject, text, html } = leased.payload;
+  const { subject, text, html, unsubscribeUrl } = leased.payload;
   const messageId = `<${leased.id}@${MESSAGE_ID_DOMAIN}>`;
-  const sent = await mail.send({ to: leased.recipient, subject, text, html, messageId });
+  const sent = await mail.send({
+    to: leased.recipient,
+    subject,
+    text,
+    html,
+    messageId,
+    headers: { ...NO_AUTOMATIC_ANSWER, ...(unsubscribeUrl ? unsubscribing(unsubscribeUrl) : {}) },
+  });
   await settleMail(db, leased.id, outcomeOf(leased, sent, now()), now());
   return true;
 }

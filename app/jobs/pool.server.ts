@@ -38,7 +38,7 @@ function pool(): Pool {
 export async function runInPool<Result>(task: PoolTask): Promise<TaskResult<Result>> {
   const release = await takeTurn();
   try {
-    const host = pool().idle.pop() ?? (await startHost());
+    const host = restedHost() ?? (await startHost());
     const result = await runOn(host, task);
     if (host.connected && !host.killed) rest(host);
     return result as TaskResult<Result>;
@@ -68,24 +68,31 @@ async function takeTurn(): Promise<() => void> {
 async function startHost(): Promise<ChildProcess> {
   const file = await moduleFile("task-host");
   const { PATH, TMPDIR, NODE_ENV } = process.env;
-  return fork(fileURLToPath(file), [], {
+  const host = fork(fileURLToPath(file), [], {
     execArgv: file.endsWith(".ts") ? ["--import", "tsx"] : [],
     env: { PATH, TMPDIR, NODE_ENV },
     serialization: "advanced",
     stdio: ["ignore", "ignore", "pipe", "ipc"],
   });
+  host.once("exit", () => {
+    const { idle } = pool();
+    const place = idle.indexOf(host);
+    if (place >= 0) idle.splice(place, 1);
+  });
+  return host;
+}
+
+function restedHost(): ChildProcess | undefined {
+  const { idle } = pool();
+  for (let host = idle.pop(); host; host = idle.pop()) if (host.connected) return host;
+  return undefined;
 }
 
 /** A host at rest keeps no process alive; when its parent ends, so does it. */
 function rest(host: ChildProcess): void {
-  const { idle } = pool();
-  host.once("exit", () => {
-    const place = idle.indexOf(host);
-    if (place >= 0) idle.splice(place, 1);
-  });
   host.unref();
   host.channel?.unref();
-  idle.push(host);
+  pool().idle.push(host);
 }
 
 function runOn(host: ChildProcess, { file, input, signal, timeLimitMs = TIME_LIMIT_MS }: PoolTask) {

@@ -2,6 +2,9 @@ import { gzipSync } from "node:zlib";
 import { type Drawing, readDrawing } from "~/domain/drawing";
 import type { ReadingSummary } from "~/models/readings.server";
 
+/** Of gzip: half the time of its standard for some more bytes. */
+const FAST = 2;
+
 export interface ReadDrawingInput {
   readonly bytes: Uint8Array;
 }
@@ -14,7 +17,11 @@ export type ReadDrawingOutput =
 export default function readDrawingTask({ bytes }: ReadDrawingInput): ReadDrawingOutput {
   const read = readDrawing(bytes);
   if (!read.ok) return read;
-  return { ok: true, summary: summaryOf(read.drawing), drawing: gzipSync(JSON.stringify(read.drawing)) };
+  return {
+    ok: true,
+    summary: summaryOf(read.drawing),
+    drawing: gzipSync(JSON.stringify(read.drawing), { level: FAST }),
+  };
 }
 
 function summaryOf({ declared, layers, entities, ignored, notes }: Drawing): ReadingSummary {
