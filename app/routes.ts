@@ -23,6 +23,15 @@ export default [
   ]),
   route("sign-out", "routes/account/sign-out.ts"),
 
+  layout("routes/builder/layout.tsx", [
+    ...prefix("orders", [
+      index("routes/builder/orders.tsx"),
+      route("new", "routes/builder/new-drawing.tsx"),
+      route(":orderId", "routes/builder/order.tsx"),
+      route(":orderId/checkout", "routes/builder/checkout.tsx"),
+    ]),
+  ]),
+
   layout("routes/shop/layout.tsx", [...prefix("shop", [index("routes/shop/queue.tsx")])]),
 
   layout("routes/owner/layout.tsx", [...prefix("owner", [route("staff", "routes/owner/staff.tsx")])]),

@@ -56,6 +56,19 @@ export async function listDrawings(executor: Executor, orderId: string): Promise
     .orderBy(asc(orderDrawings.position));
 }
 
+/** Bytes of each file, by its hash. */
+export async function findFileSizes(
+  executor: Executor,
+  shas: readonly string[],
+): Promise<ReadonlyMap<string, number>> {
+  if (shas.length === 0) return new Map();
+  const rows = await executor
+    .select({ sha256: drawingFiles.sha256, size: drawingFiles.size })
+    .from(drawingFiles)
+    .where(inArray(drawingFiles.sha256, [...new Set(shas)]));
+  return new Map(rows.map(({ sha256, size }) => [sha256, size]));
+}
+
 /** One drawing of an order, also when it was taken out since: its quote or revision may still name it. */
 export async function findDrawing(
   executor: Executor,

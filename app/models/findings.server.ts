@@ -1,7 +1,6 @@
 import { desc, eq, inArray, sql } from "drizzle-orm";
 import type { Executor } from "~/db/client.server";
 import { findingAnswers, findings } from "~/db/schema";
-import type { Finding } from "~/domain/fit";
 
 export type StoredFinding = typeof findings.$inferSelect;
 export type FindingAnswer = typeof findingAnswers.$inferSelect;
@@ -13,7 +12,7 @@ export type AnsweredFinding = StoredFinding & {
 export async function insertFindings(
   tx: Executor,
   revisionId: string,
-  found: readonly Finding[],
+  found: readonly StoredFinding["content"][],
 ): Promise<StoredFinding[]> {
   if (found.length === 0) return [];
   return tx

@@ -28,6 +28,19 @@ export async function findInterpretation(
   return row;
 }
 
+/** One of an order's history, by its number. */
+export async function findInterpretationNumbered(
+  executor: Executor,
+  orderId: string,
+  number: number,
+): Promise<InterpretationRow | undefined> {
+  const [row] = await executor
+    .select()
+    .from(interpretations)
+    .where(and(eq(interpretations.orderId, orderId), eq(interpretations.number, number)));
+  return row;
+}
+
 /** Adds number `after` + 1 to the history. Undefined when somebody else has added it first. */
 export async function addInterpretation(
   executor: Executor,

@@ -154,7 +154,8 @@ export const findings = sqliteTable(
     position: integer().notNull(),
     severity: text().$type<"stop" | "ask" | "note">().notNull(),
     code: text().notNull(),
-    content: text({ mode: "json" }).$type<Finding>().notNull(),
+    /** With the drawing it is in, where the order has several. */
+    content: text({ mode: "json" }).$type<Finding & { readonly fileSha?: string }>().notNull(),
   },
   (table) => [index("findings_revision").on(table.revisionId)],
 );

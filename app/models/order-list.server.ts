@@ -1,0 +1,85 @@
+import { and, count, desc, eq, inArray, or, sql } from "drizzle-orm";
+import type { Executor } from "~/db/client.server";
+import { orders, quotes } from "~/db/schema";
+import type { Stage } from "~/domain/orders";
+import type { Order, OrderScope } from "./orders.server";
+
+export interface OrderSearch {
+  /** Orders in one of these stages; all when left out. */
+  readonly stages?: readonly Stage[] | undefined;
+  /** Part of a name or a reference. */
+  readonly words?: string | undefined;
+  /** From 1. */
+  readonly page: number;
+  readonly size: number;
+}
+
+export interface ListedOrder extends Order {
+  /** Of the current quote, null while there is none. */
+  readonly quote: {
+    readonly total: number;
+    readonly currency: string;
+    readonly status: (typeof quotes.$inferSelect)["status"];
+    readonly expiresAt: Date;
+  } | null;
+}
+
+/** Orders within the scope, the last changed first, one page of them. */
+export async function pageOfOrders(
+  executor: Executor,
+  scope: OrderScope,
+  search: OrderSearch,
+): Promise<{ readonly rows: ListedOrder[]; readonly found: number }> {
+  const asked = and(within(scope), inStages(search.stages), withWords(search.words));
+  const rows = await executor
+    .select({ order: orders, quote: quotes })
+    .from(orders)
+    .leftJoin(quotes, eq(quotes.id, orders.quoteId))
+    .where(asked)
+    .orderBy(desc(orders.updatedAt), desc(orders.reference))
+    .limit(search.size)
+    .offset((search.page - 1) * search.size);
+  const [counted] = await executor.select({ found: count() }).from(orders).where(asked);
+  return {
+    rows: rows.map(({ order, quote }) => ({
+      ...order,
+      quote: quote && {
+        total: quote.total,
+        currency: quote.currency,
+        status: quote.status,
+        expiresAt: quote.expiresAt,
+      },
+    })),
+    found: counted?.found ?? 0,
+  };
+}
+
+/** How many orders within the scope stand in each stage. */
+export async function countByStage(
+  executor: Executor,
+  scope: OrderScope,
+): Promise<ReadonlyMap<Stage, number>> {
+  const rows = await executor
+    .select({ stage: orders.stage, found: count() })
+    .from(orders)
+    .where(within(scope))
+    .groupBy(orders.stage);
+  return new Map(rows.map(({ stage, found }) => [stage, found]));
+}
+
+const within = (scope: OrderScope) =>
+  scope.kind === "staff" ? undefined : eq(orders.builderId, scope.userId);
+
+const inStages = (stages: readonly Stage[] | undefined) =>
+  stages === undefined ? undefined : inArray(orders.stage, [...stages]);
+
+/** `%` and `_` in what a person typed are letters like any other. */
+function withWords(words: string | undefined) {
+  const wanted = words?.trim();
+  if (!wanted) return undefined;
+  const pattern = `%${wanted.replace(/[\\%_]/g, (sign) => `\\${sign}`)}%`;
+  return or(
+    sql`${orders.name} like ${pattern} escape '\\'`,
+    sql`${orders.reference} like ${pattern} escape '\\'`,
+  );
+}
