@@ -6,6 +6,6 @@ export default async function trouble(how: string): Promise<unknown> {
   /** A heap that grows by little ends its thread; one that grows by much at once ends its process. */
   const mouthful = { hang: 0, devour: 1_000_000, gorge: 8_000_000 }[how];
   if (mouthful === undefined) throw new Error(`No such trouble: ${how}`);
-  const kept: object[][] = [];
-  for (;;) if (mouthful > 0) kept.push(new Array(mouthful).fill({}));
+  const kept: number[][] = [];
+  for (;;) if (mouthful > 0) kept.push(new Array(mouthful).fill(0.5));
 }
