@@ -51,7 +51,8 @@ export function decodeText(bytes: Uint8Array): DecodedText {
     return { text: new TextDecoder("utf-16le").decode(bytes), notes: [] };
   if (bytes[0] === 0xfe && bytes[1] === 0xff)
     return { text: new TextDecoder("utf-16be").decode(bytes), notes: [] };
-  if (isAscii(bytes)) return { text: new TextDecoder().decode(bytes), notes: [] };
+  const isMarkedUtf8 = bytes[0] === 0xef && bytes[1] === 0xbb && bytes[2] === 0xbf;
+  if (isMarkedUtf8 || isAscii(bytes)) return { text: new TextDecoder().decode(bytes), notes: [] };
 
   const head = new TextDecoder("windows-1252").decode(bytes.subarray(0, HEADER_REACH));
   const version = /\$ACADVER\s+1\s+(AC\d+)/.exec(head)?.[1] ?? "";

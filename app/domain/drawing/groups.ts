@@ -1,4 +1,4 @@
-/** One group: its code and its value as written, blanks at both ends dropped. */
+/** One group: its code and its value as written, blanks at both ends dropped unless it is a piece of text. */
 export interface Group {
   readonly code: number;
   readonly value: string;
@@ -20,6 +20,8 @@ export interface RecordScan {
 /** Group codes run up to 1071 (DXF Reference, group codes in numerical order). */
 const HIGHEST_CODE = 1071;
 const COMMENT = 999;
+/** Pieces of text, whose blanks count where pieces are put together. */
+const TEXT_CODES: ReadonlySet<number> = new Set([1, 3]);
 /** Names a record can have; anything else after a code 0 is damage. */
 const RECORD_TYPE = /^\w*[A-Za-z]\w*$/;
 
@@ -67,7 +69,8 @@ export function* scanRecords(source: string, scan: RecordScan): Generator<GroupR
       continue;
     }
     const lineBreak = text.indexOf("\n", at);
-    const value = text.slice(at, lineBreak < 0 ? undefined : lineBreak).trim();
+    const line = text.slice(at, lineBreak < 0 ? undefined : lineBreak);
+    const value = TEXT_CODES.has(code) ? line.replace(/\r$/, "") : line.trim();
     if (lineBreak < 0 && value !== "EOF") break;
     at = lineBreak < 0 ? text.length : lineBreak + 1;
     if (code === COMMENT) continue;

@@ -5,7 +5,6 @@ import { unescapeCharacters } from "./strings";
 
 /** Header variables the reader needs. */
 export interface DxfHeader {
-  readonly version: string | null;
   /** The `$INSUNITS` code. */
   readonly units: number | null;
 }
@@ -48,7 +47,7 @@ function readHeader(record: GroupRecord): DxfHeader {
     else if (name !== null && !variables.has(name)) variables.set(name, value);
   }
   const units = Number(variables.get("$INSUNITS") ?? Number.NaN);
-  return { version: variables.get("$ACADVER") ?? null, units: Number.isInteger(units) ? units : null };
+  return { units: Number.isInteger(units) ? units : null };
 }
 
 function readLayer(record: GroupRecord): DxfLayer {
@@ -74,7 +73,7 @@ export function readSections<Item>(
   take: (entity: RawEntity, isCut: boolean) => Item,
 ): DxfSections<Item> {
   const scan: RecordScan = { strayLines: 0, ended: false };
-  let header: DxfHeader = { version: null, units: null };
+  let header: DxfHeader = { units: null };
   const layers: DxfLayer[] = [];
   const blocks: (DxfBlock<Item> & { entities: Item[] })[] = [];
   const entities: Item[] = [];
