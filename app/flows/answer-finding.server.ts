@@ -2,18 +2,20 @@ import { transact } from "~/db/client.server";
 import { checkMove, mayDo } from "~/domain/orders";
 import { recordEvent } from "~/models/events.server";
 import { type FindingAnswer, insertFindingAnswer, listFindings } from "~/models/findings.server";
+import { newMessageId } from "~/models/messages.server";
 import { findOrder } from "~/models/orders.server";
 import { type Actor, scopeOfActor } from "./actor";
 import { changeStage } from "./change-stage.server";
 import { answerMove, type Moved } from "./move.server";
 import { factsOfOrder } from "./order-facts.server";
 import { answering, NO_ORDER, orRollBack, Refused, refuse, type Verdict } from "./verdict";
+import { writeMessage } from "./write-message.server";
 
 export interface AnswerFindingOptions {
   readonly actor: Actor;
   readonly orderId: string;
   readonly findingId: string;
-  /** `message` puts the question to the shop: it stays open until the builder accepts. */
+  /** `message` puts the question to the shop, in the order's thread: it stays open until the builder accepts. */
   readonly answer: Extract<FindingAnswer["answer"], "accept" | "message">;
   readonly note?: string | null | undefined;
 }
@@ -37,6 +39,18 @@ export async function answerFinding(options: AnswerFindingOptions): Promise<Verd
       if (finding?.severity !== "ask") throw new Refused(refuse("not-found", "There is no such question."));
       await insertFindingAnswer(tx, { findingId, answer, note: note?.trim() || null, answeredBy: actor.id });
       await recordEvent(tx, { orderId: order.id, kind: "quote", data: { answered: finding.code } });
+      if (answer === "message")
+        await writeMessage(tx, {
+          order,
+          id: newMessageId(),
+          authorId: actor.id,
+          audience: "both",
+          body: note?.trim() ?? "",
+          partLabel: finding.content.part,
+          spot: finding.content.at,
+          files: [],
+          now: new Date(),
+        });
       const facts = await factsOfOrder(tx, order, new Date());
       if (order.stage !== "needs-review" || facts.unansweredAsks > 0 || facts.reviewOpen)
         return answerMove(order);

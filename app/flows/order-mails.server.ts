@@ -5,18 +5,17 @@ import type { Mail, OrderMailFacts } from "~/documents/mails/order-mail";
 import { quoteMail } from "~/documents/mails/quote-ready";
 import { receiptMail } from "~/documents/mails/receipt";
 import { refundMail } from "~/documents/mails/refund";
+import { sentBackMail } from "~/documents/mails/sent-back";
+import { type ShortageFacts, shortageMail } from "~/documents/mails/shortage";
 import { stageMail } from "~/documents/mails/stage";
 import type { Stage } from "~/domain/orders";
 import type { Order } from "~/models/orders.server";
-import { queueMail } from "~/models/outbox.server";
 import { findAddressee } from "~/models/people.server";
 import type { Quote } from "~/models/quotes.server";
 import { currentSettings } from "~/models/settings.server";
 import { environment } from "~/server/environment.server";
 import type { Payment } from "~/services/payments.server";
-
-/** Mails a builder may turn off; receipts, refunds, holds and cancellations are always sent. */
-const MUTABLE = new Set(["stage", "quote"]);
+import { mailPerson } from "./mail-person.server";
 
 /**
  * Writes one mail to the order's builder into the outbox, in the transaction of its cause. `make` may answer null:
@@ -30,23 +29,23 @@ async function mailBuilder(
   dedupeKey?: string,
 ): Promise<void> {
   const builder = await findAddressee(tx, order.builderId);
-  if (!builder || (MUTABLE.has(template) && builder.mutedMails.includes(template))) return;
+  if (!builder) return;
   const { shop } = await currentSettings(tx);
-  const mail = make({
-    shopName: shop.name,
-    recipientName: builder.name,
-    reference: order.reference,
-    orderName: order.name,
-    url: `${environment.APP_URL}/orders/${order.id}`,
-    timeZone: shop.timeZone,
-  });
-  if (!mail) return;
-  await queueMail(tx, {
-    ...mail,
-    recipient: builder.email,
+  await mailPerson(tx, {
+    person: builder,
     template,
     orderId: order.id,
-    ...(dedupeKey ? { dedupeKey } : {}),
+    dedupeKey,
+    make: (unsubscribe) =>
+      make({
+        shopName: shop.name,
+        recipientName: builder.name,
+        reference: order.reference,
+        orderName: order.name,
+        url: `${environment.APP_URL}/orders/${order.id}`,
+        timeZone: shop.timeZone,
+        unsubscribe,
+      }),
   });
 }
 
@@ -115,6 +114,11 @@ export const mailRefund = (
 export const mailHold = (tx: Executor, { order, reason }: { order: Order; reason: string }): Promise<void> =>
   mailBuilder(tx, order, "hold", (facts) => holdMail({ ...facts, reason }));
 
+export const mailSentBack = (
+  tx: Executor,
+  { order, reason }: { order: Order; reason: string },
+): Promise<void> => mailBuilder(tx, order, "sent-back", (facts) => sentBackMail({ ...facts, reason }));
+
 export const mailCancelled = (
   tx: Executor,
   { order, reason, wasPaid }: { order: Order; reason: string; wasPaid: boolean },
@@ -133,3 +137,23 @@ export async function mailStage(tx: Executor, { order, from }: { order: Order; f
     }),
   );
 }
+
+/** Tells of a piece that is made again. */
+export const mailShortage = (
+  tx: Executor,
+  {
+    order,
+    pieceId,
+    ...shortage
+  }: { order: Order; pieceId: string } & Pick<
+    ShortageFacts,
+    "partLabel" | "partName" | "number" | "of" | "state" | "cause" | "payer"
+  >,
+): Promise<void> =>
+  mailBuilder(
+    tx,
+    order,
+    "shortage",
+    (facts) => shortageMail({ ...facts, ...shortage, promisedFor: order.promisedFor }),
+    `shortage:${pieceId}`,
+  );

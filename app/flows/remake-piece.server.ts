@@ -4,6 +4,7 @@ import { listNestsOfOrder, releasePlacements } from "~/models/nests.server";
 import { insertPieces, listPieces, losePiece, type Piece } from "~/models/pieces.server";
 import { changeStage } from "./change-stage.server";
 import { answerMove, type Moved, type MoveOptions, takeMove } from "./move.server";
+import { mailShortage } from "./order-mails.server";
 import { settleNest } from "./settle-nest.server";
 import { answering, orRollBack, Refused, refuse, type Verdict } from "./verdict";
 
@@ -58,6 +59,17 @@ export async function remakePiece(options: RemakePieceOptions): Promise<Verdict<
         }),
       );
       for (const nest of nests) await settleNest(tx, nest.id);
+      await mailShortage(tx, {
+        order: after,
+        pieceId: piece.id,
+        partLabel: piece.part.label,
+        partName: piece.part.name,
+        number: piece.number,
+        of: piece.of,
+        state,
+        cause: reason,
+        payer,
+      });
       return answerMove(after);
     }),
   );

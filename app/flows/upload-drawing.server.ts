@@ -1,5 +1,3 @@
-import { createHash } from "node:crypto";
-import { Readable } from "node:stream";
 import { db, transact } from "~/db/client.server";
 import { SNIFFED_BYTES, sniffContent } from "~/domain/drawing";
 import { wakeRunners } from "~/jobs/wake.server";
@@ -10,6 +8,7 @@ import { findOrder } from "~/models/orders.server";
 import { storage } from "~/services/clients.server";
 import { type Actor, scopeOfActor } from "./actor";
 import { queueDrawingReading } from "./read-drawing.server";
+import { hashOf, plainName, streamOf } from "./stored-file";
 import { answering, NO_ORDER, Refused, refuse, type Verdict } from "./verdict";
 
 export interface UploadDrawingOptions {
@@ -31,7 +30,6 @@ export type UploadVerdict = Verdict<{
 
 /** What DXF is registered as: IANA media types, image/vnd.dxf. */
 export const DXF_TYPE = "image/vnd.dxf";
-const LONGEST_NAME = 120;
 
 /**
  * Keeps an uploaded drawing by the hash of its bytes and lays it into an order, with its reading queued: bytes
@@ -40,7 +38,7 @@ const LONGEST_NAME = 120;
  */
 export async function uploadDrawing(options: UploadDrawingOptions): Promise<UploadVerdict> {
   const { file, orderId, actor } = options;
-  const fileName = plainName(options.fileName);
+  const fileName = plainName(options.fileName, "drawing.dxf");
   const sniffed = sniffContent(new Uint8Array(await file.slice(0, SNIFFED_BYTES).arrayBuffer()));
   if (!sniffed.ok) return refuse("invalid", sniffed.reason);
 
@@ -91,26 +89,6 @@ export async function uploadDrawing(options: UploadDrawingOptions): Promise<Uplo
   );
   if (verdict.ok) wakeRunners();
   return verdict;
-}
-
-const streamOf = (file: Blob) => Readable.from(chunksOf(file));
-
-async function* chunksOf(file: Blob): AsyncGenerator<Uint8Array> {
-  const reader = file.stream().getReader();
-  for (let read = await reader.read(); !read.done; read = await reader.read()) yield read.value;
-}
-
-async function hashOf(file: Blob): Promise<string> {
-  const hash = createHash("sha256");
-  for await (const chunk of chunksOf(file)) hash.update(chunk);
-  return hash.digest("hex");
-}
-
-/** The last part of whatever path a browser sent, without control characters. */
-function plainName(fileName: string): string {
-  const last = fileName.split(/[/\\]/).at(-1) ?? "";
-  const plain = last.replace(/\p{C}/gu, "").trim().slice(-LONGEST_NAME);
-  return plain || "drawing.dxf";
 }
 
 const orderName = (fileName: string) =>

@@ -1,4 +1,4 @@
-import { and, eq } from "drizzle-orm";
+import { and, eq, inArray } from "drizzle-orm";
 import type { Executor } from "~/db/client.server";
 import { userRoles, users } from "~/db/schema";
 import type { Role } from "~/domain/orders";
@@ -43,4 +43,19 @@ export async function setShownUnit(
 /** A valid certificate is on file: this person's orders carry no sales tax. */
 export async function markTaxExempt(executor: Executor, userId: string): Promise<void> {
   await executor.update(users).set({ taxExempt: true, updatedAt: new Date() }).where(eq(users.id, userId));
+}
+
+/** The kinds of mail a person has turned off. */
+export async function setMutedMails(executor: Executor, userId: string, mutedMails: string[]): Promise<void> {
+  await executor.update(users).set({ mutedMails, updatedAt: new Date() }).where(eq(users.id, userId));
+}
+
+/** The names of some people by their ids. */
+export async function findNames(executor: Executor, ids: readonly string[]): Promise<Map<string, string>> {
+  if (ids.length === 0) return new Map();
+  const rows = await executor
+    .select({ id: users.id, name: users.name })
+    .from(users)
+    .where(inArray(users.id, [...new Set(ids)]));
+  return new Map(rows.map(({ id, name }) => [id, name]));
 }

@@ -30,7 +30,7 @@ export function quoteMail(facts: QuoteMailFacts): Mail {
         : []),
       waits
         ? `Before it can be paid a person in the shop looks at it, because ${facts.review.join("; ")}. You are told as soon as that is done.`
-        : `Paid by then, it leaves the shop by ${mailDay(facts.promisedFor, facts.timeZone)}. Look through the part list and its sizes before you approve them: the design stays your responsibility.`,
+        : `Paid today, it leaves the shop by ${mailDay(facts.promisedFor, facts.timeZone)}; paid later, perhaps later. Look through the part list and its sizes before you approve them: the design stays your responsibility.`,
     ],
     action: "Look at the quote",
   });
