@@ -3,7 +3,9 @@ import { beforeEach, describe, expect, test } from "vitest";
 import { db, transact } from "~/db/client.server";
 import { drawingFiles, jobs, orderDrawings, orders, readings } from "~/db/schema";
 import { openDrawing } from "~/flows/open-drawing.server";
+import { removeOrderDrawing } from "~/flows/remove-drawing.server";
 import { uploadDrawing } from "~/flows/upload-drawing.server";
+import { listDrawings } from "~/models/drawing-files.server";
 import { changeOrder } from "~/models/order-writes.server";
 import { resetDatabase } from "../support/database";
 import { shelvesDxf } from "../support/drawings";
@@ -108,6 +110,24 @@ describe("a drawing", () => {
       Array.from({ length: 12 }, (_, n) => `KP-${2001 + n}`),
     );
     expect(await db.$count(readings)).toBe(1);
+  });
+
+  test("taken out of a draft is gone from it, and can be put back", async () => {
+    const person = await makePerson();
+    const first = await upload(person, shelvesDxf());
+    if (!first.ok) throw new Error(first.words);
+    const { orderId, drawingId } = first;
+    const stranger = await makePerson();
+    expect(await removeOrderDrawing({ actor: stranger, orderId, drawingId })).toMatchObject({
+      reason: "not-found",
+    });
+    expect(await removeOrderDrawing({ actor: person, orderId, drawingId })).toEqual({ ok: true });
+    expect(await removeOrderDrawing({ actor: person, orderId, drawingId })).toMatchObject({
+      reason: "not-found",
+    });
+    expect(await listDrawings(db, orderId)).toEqual([]);
+    expect(await upload(person, shelvesDxf(), { orderId })).toMatchObject({ ok: true, added: true });
+    expect(await listDrawings(db, orderId)).toMatchObject([{ position: 2 }]);
   });
 
   test("is given back as it came, and only within its order", async () => {
