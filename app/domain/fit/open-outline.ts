@@ -38,7 +38,7 @@ const nearlyClosed = ({ layer, gap, at }: OpenChain, { say, limits }: FitCase): 
   remedy: "close-gap",
 });
 
-const openLine = ({ layer, length, at }: OpenChain, { say }: FitCase): Finding => ({
+const openLine = ({ layer, length, gap, at }: OpenChain, { say }: FitCase): Finding => ({
   code: "open-outline",
   severity: "ask",
   part: null,
@@ -46,7 +46,10 @@ const openLine = ({ layer, length, at }: OpenChain, { say }: FitCase): Finding =
   at,
   measured: length,
   limit: null,
-  words: `A line of ${say(length)} on layer ${layer} closes no outline. It is not cut unless you say what it is.`,
+  words:
+    gap > 0
+      ? `A line of ${say(length)} on layer ${layer} closes no outline. It is not cut unless you say what it is.`
+      : `A line of ${say(length)} on layer ${layer} stands in no part. It is not cut unless you say what it is.`,
   remedy: null,
 });
 

@@ -22,7 +22,10 @@ export const WIDEST_COUNTERBORE = 20;
 const SMALLEST_HELD = 20;
 const CONCENTRIC = 0.05;
 
-const layerIsFrame = (layer: string): boolean => FRAME_LAYER.test(layer.toUpperCase().replaceAll("_", " "));
+/** A layer named as border or sheet, what is inside drawn on others: parts in a layer named for its sheets are parts. */
+const isOnFrameLayer = (outlines: readonly Outline[], place: number, held: readonly number[]): boolean =>
+  FRAME_LAYER.test(outlines[place].layer.toUpperCase().replaceAll("_", " ")) &&
+  held.some((child) => outlines[child].layer !== outlines[place].layer);
 
 /** Sides of the rectangle that the outline is, or null; corners in the middle of a side do not matter. */
 export function rectangleSides(
@@ -91,7 +94,7 @@ export function findFrames(outlines: readonly Outline[], nesting: Nesting): Set<
       (child) => children.has(child) && boxExtent(outlines[child].box) > SMALLEST_HELD,
     );
     const holdsOneFrame = held.length === 1 && frames.has(held[0]);
-    if (isSheet(sides) || holdsOneFrame || holders.length >= 2 || layerIsFrame(outlines[place].layer))
+    if (isSheet(sides) || holdsOneFrame || holders.length >= 2 || isOnFrameLayer(outlines, place, held))
       frames.add(place);
   }
   return frames;

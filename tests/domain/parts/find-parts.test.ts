@@ -110,6 +110,14 @@ describe("what is set aside", () => {
     expect(onLayer.setAside).toMatchObject([{ what: "frame", layer: "SHEET_BORDER", count: 1 }]);
   });
 
+  it("no panel on a layer that is named for its sheet stock", () => {
+    const onStock = [
+      drawn(rectangle(0, 0, 700, 500), "SHEET 18MM"),
+      drawn(rectangle(9, 9, 50, 60), "SHEET 18MM"),
+    ];
+    expect(found(onStock)).toMatchObject({ setAside: [], totals: { parts: 1, holes: 1 } });
+  });
+
   it("no panel with openings, lettering or countersunk holes", () => {
     const panel = found([drawn(rectangle(0, 0, 700, 500)), drawn(hole(50, 50, 40)), ...plate(200, 200)]);
     expect(panel.setAside).toEqual([]);
