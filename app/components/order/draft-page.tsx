@@ -2,7 +2,6 @@ import { useState } from "react";
 import type { Interpretation } from "~/domain/orders";
 import type { DraftView } from "~/routes/builder/draft-view.server";
 import type { OrderView } from "~/routes/builder/order-view.server";
-import { Beside } from "../beside";
 import { Rail } from "../rail";
 import { Sheet } from "../sheet";
 import { AddDrawings } from "./add-drawings";
@@ -15,6 +14,7 @@ import { FitReport } from "./fit-report";
 import { formatThickness } from "./format-thickness";
 import { OrderDrawing } from "./order-drawing";
 import { OrderHeading } from "./order-heading";
+import { OrderLayout } from "./order-layout";
 import { PartChoice } from "./part-choice";
 import { PartsList } from "./parts-list";
 import { PricePanel } from "./price-panel";
@@ -48,8 +48,8 @@ export function DraftPage({ order, draft }: DraftPageProps) {
   return (
     <>
       <OrderHeading order={order} promised={price.ok ? price.promisedFor : null} />
-      <Beside
-        main={
+      <OrderLayout
+        drawing={
           <OrderDrawing
             orderId={order.id}
             geometryKey={draft.geometryKey}
@@ -60,77 +60,77 @@ export function DraftPage({ order, draft }: DraftPageProps) {
           />
         }
         rail={
-          <Rail label="The order">
-            <div id="questions" className="scroll-mt-4 empty:hidden">
-              <FirstQuestions
-                key={draft.after}
-                question={draft.unitQuestion}
-                files={files}
-                stocks={draft.stocks}
-                after={draft.after}
-              />
-            </div>
-            {draft.parts.length > 0 && (
-              <FitReport findings={draft.findings} focus={focus} waitsFor={fitWaitsFor(draft)} />
-            )}
-            {draft.parts.length > 0 && (
-              <PartsList parts={draft.parts} focus={focus} note={stockNote(draft)}>
-                {chosen && <PartChoice part={chosen} after={draft.after} />}
-              </PartsList>
-            )}
-            <DeliveryPanel
-              delivery={draft.delivery}
-              shipTo={draft.shipTo}
-              addresses={draft.addresses}
-              shopAddress={order.shop.address}
-              version={order.version}
-            />
-            <PricePanel price={price} stale={stale} supposing={supposing(draft)}>
-              <QuoteAct
+          <>
+            <Rail label="The order">
+              <div id="questions" className="scroll-mt-4 empty:hidden">
+                <FirstQuestions
+                  key={draft.after}
+                  question={draft.unitQuestion}
+                  files={files}
+                  stocks={draft.stocks}
+                  after={draft.after}
+                />
+              </div>
+              {draft.parts.length > 0 && (
+                <FitReport findings={draft.findings} focus={focus} waitsFor={fitWaitsFor(draft)} />
+              )}
+              {draft.parts.length > 0 && (
+                <PartsList parts={draft.parts} focus={focus} note={stockNote(draft)}>
+                  {chosen && <PartChoice part={chosen} after={draft.after} />}
+                </PartsList>
+              )}
+              <DeliveryPanel
+                delivery={draft.delivery}
+                shipTo={draft.shipTo}
+                addresses={draft.addresses}
+                shopAddress={order.shop.address}
                 version={order.version}
-                requestId={order.requestId}
-                files={files}
-                findings={draft.findings}
-                delivered={draft.delivery !== null}
               />
-            </PricePanel>
-          </Rail>
+              <PricePanel price={price} stale={stale} supposing={supposing(draft)}>
+                <QuoteAct
+                  version={order.version}
+                  requestId={order.requestId}
+                  files={files}
+                  findings={draft.findings}
+                  delivered={draft.delivery !== null}
+                />
+              </PricePanel>
+            </Rail>
+            <Sheet padded>
+              <h2 className="mb-3 text-lead font-semibold">Choices</h2>
+              <ChoicesPanel
+                content={content}
+                files={files}
+                after={draft.after}
+                onAhead={(next) => setAhead({ after: draft.after, content: next })}
+              />
+            </Sheet>
+            <CancelOrder order={order} />
+          </>
+        }
+        below={
+          <Sheet>
+            <div id="files" className="scroll-mt-4 divide-y divide-line">
+              <div className="flex flex-wrap items-center justify-between gap-3 px-4 py-3 sm:px-6">
+                <h2 className="text-lead font-semibold">Drawings</h2>
+                <UndoChoice after={draft.after} />
+              </div>
+              {files.map((file) => (
+                <FileSheet
+                  key={file.drawingId}
+                  orderId={order.id}
+                  version={order.version}
+                  after={draft.after}
+                  file={file}
+                  stocks={draft.stocks}
+                  alone={files.length === 1}
+                />
+              ))}
+              <AddDrawings orderId={order.id} upload={order.upload} />
+            </div>
+          </Sheet>
         }
       />
-      <div className="grid items-start gap-5 lg:grid-cols-[minmax(0,1fr)_minmax(20rem,25rem)]">
-        <Sheet>
-          <div id="files" className="scroll-mt-4 divide-y divide-line">
-            <div className="flex flex-wrap items-center justify-between gap-3 px-4 py-3 sm:px-6">
-              <h2 className="text-lead font-semibold">Drawings</h2>
-              <UndoChoice after={draft.after} />
-            </div>
-            {files.map((file) => (
-              <FileSheet
-                key={file.drawingId}
-                orderId={order.id}
-                version={order.version}
-                after={draft.after}
-                file={file}
-                stocks={draft.stocks}
-                alone={files.length === 1}
-              />
-            ))}
-            <AddDrawings orderId={order.id} upload={order.upload} />
-          </div>
-        </Sheet>
-        <div className="space-y-5">
-          <Sheet padded>
-            <h2 className="mb-3 text-lead font-semibold">Choices</h2>
-            <ChoicesPanel
-              content={content}
-              files={files}
-              after={draft.after}
-              onAhead={(next) => setAhead({ after: draft.after, content: next })}
-            />
-          </Sheet>
-          <CancelOrder order={order} />
-        </div>
-      </div>
     </>
   );
 }

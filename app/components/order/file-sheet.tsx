@@ -52,29 +52,27 @@ export function FileSheet({ orderId, version, after, file, stocks, alone }: File
         <p className="border-l-4 border-amber bg-amber-wash px-4 py-3">{file.words}</p>
       )}
       {file.state === "read" && (
-        <div className="grid gap-x-8 gap-y-5 xl:grid-cols-[minmax(0,1fr)_minmax(0,22rem)]">
+        <>
+          {file.unit !== null && file.materialId !== null && (
+            <FileChoice file={file} after={after} stocks={stocks} />
+          )}
           <div>
             <h4 className="font-semibold">Layers</h4>
             <LayersPanel file={file} after={after} />
           </div>
-          <div className="space-y-5">
-            {file.unit !== null && file.materialId !== null && (
-              <FileChoice file={file} after={after} stocks={stocks} />
+          <div>
+            <h4 className="font-semibold">Not cut</h4>
+            {file.leftOut.length === 0 ? (
+              <p className="text-soft">Everything in the file becomes a part.</p>
+            ) : (
+              <ul className="mt-1 list-disc space-y-0.5 pl-4 text-soft">
+                {file.leftOut.map((line) => (
+                  <li key={line}>{line}</li>
+                ))}
+              </ul>
             )}
-            <div>
-              <h4 className="font-semibold">Not cut</h4>
-              {file.leftOut.length === 0 ? (
-                <p className="text-soft">Everything in the file becomes a part.</p>
-              ) : (
-                <ul className="mt-1 list-disc space-y-0.5 pl-4 text-soft">
-                  {file.leftOut.map((line) => (
-                    <li key={line}>{line}</li>
-                  ))}
-                </ul>
-              )}
-            </div>
           </div>
-        </div>
+        </>
       )}
     </section>
   );
@@ -83,24 +81,24 @@ export function FileSheet({ orderId, version, after, file, stocks, alone }: File
 function FileChoice({ file, after, stocks }: Pick<FileSheetProps, "file" | "after" | "stocks">) {
   const { Form, pending, refusal } = useAct("file", file.sha256);
   return (
-    <Form key={after} method="post" className="space-y-3">
+    <Form key={after} method="post" className="space-y-2 print:hidden">
       <RefusalNotice refusal={refusal} />
       <input type="hidden" name="intent" value="file" />
       <input type="hidden" name="after" value={after} />
       <input type="hidden" name="sha256" value={file.sha256} />
-      <SelectField
-        field={plainField("materialId", { id: `stock-${file.number}`, value: file.materialId ?? "" })}
-        label="Stock"
-        choices={stocks.map((stock) => ({ value: stock.id, label: stockLabel(stock) }))}
-      />
-      <SelectField
-        field={plainField("unit", { id: `unit-${file.number}`, value: file.unit ?? "mm" })}
-        label="Drawn in"
-        choices={UNITS}
-      />
-      <Button size="small" pending={pending}>
-        Save stock and unit
-      </Button>
+      <div className="grid items-end gap-3 sm:grid-cols-[minmax(0,1fr)_10rem_auto]">
+        <SelectField
+          field={plainField("materialId", { id: `stock-${file.number}`, value: file.materialId ?? "" })}
+          label="Stock"
+          choices={stocks.map((stock) => ({ value: stock.id, label: stockLabel(stock) }))}
+        />
+        <SelectField
+          field={plainField("unit", { id: `unit-${file.number}`, value: file.unit ?? "mm" })}
+          label="Drawn in"
+          choices={UNITS}
+        />
+        <Button pending={pending}>Save</Button>
+      </div>
     </Form>
   );
 }

@@ -88,7 +88,8 @@ export function FirstQuestions({ question, files, stocks, after }: FirstQuestion
               <input key={sha256} type="hidden" name="stockFor" value={sha256} />
             ))}
             <SelectField
-              field={{ ...fields.materialId, required: true }}
+              field={fields.materialId}
+              required
               label="What is it cut from?"
               hint="The fit is checked against the thickness measured on the rack, not the nominal one."
               placeholder="Choose a sheet"

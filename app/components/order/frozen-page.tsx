@@ -1,6 +1,5 @@
 import type { FrozenView } from "~/routes/builder/frozen-view.server";
 import type { OrderView } from "~/routes/builder/order-view.server";
-import { Beside } from "../beside";
 import { Rail, RailSection } from "../rail";
 import { Sheet } from "../sheet";
 import { AskReview } from "./ask-review";
@@ -12,6 +11,7 @@ import { formatThickness } from "./format-thickness";
 import { OrderDrawing } from "./order-drawing";
 import { OrderHeading } from "./order-heading";
 import { OrderHistory } from "./order-history";
+import { OrderLayout } from "./order-layout";
 import { PartsList } from "./parts-list";
 import { PayPanel } from "./pay-panel";
 import { ProgressPanel } from "./progress-panel";
@@ -38,8 +38,8 @@ export function FrozenPage({ order, frozen }: FrozenPageProps) {
     <>
       <OrderHeading order={order} promised={quote?.promisedFor ?? null} />
       <StageNotice order={order} />
-      <Beside
-        main={
+      <OrderLayout
+        drawing={
           <OrderDrawing
             orderId={order.id}
             geometryKey={frozen.geometryKey}
@@ -74,43 +74,45 @@ export function FrozenPage({ order, frozen }: FrozenPageProps) {
               ))}
           </Rail>
         }
+        below={
+          <div className="grid items-start gap-5 xl:grid-cols-2">
+            <Sheet padded>
+              <h2 className="mb-2 text-lead font-semibold">What happened</h2>
+              <OrderHistory moves={order.moves} />
+            </Sheet>
+            <Rail label="Terms of the order">
+              <RailSection title="Stock">
+                <ul className="space-y-1">
+                  {stocks.map((stock) => (
+                    <li key={stock.id}>
+                      {stockWords(stock)}
+                      {stocks.length > 1 && (
+                        <span className="measure text-soft"> · {stock.labels.join(" ")}</span>
+                      )}
+                    </li>
+                  ))}
+                </ul>
+              </RailSection>
+              <RailSection title="Where it goes">
+                <p>
+                  {order.delivery === "pick-up"
+                    ? `You pick it up: ${order.shop.address.join(", ")}`
+                    : order.shipTo && placeWords(order.shipTo)}
+                </p>
+              </RailSection>
+              <RailSection title="Take care">
+                <Cautions />
+              </RailSection>
+              {(frozen.mayCancel || frozen.mayAskReview) && (
+                <div className="flex flex-wrap items-center gap-x-6 gap-y-2 px-4 py-3 print:hidden">
+                  {frozen.mayAskReview && <AskReview order={order} />}
+                  {frozen.mayCancel && <CancelOrder order={order} paid={paid} />}
+                </div>
+              )}
+            </Rail>
+          </div>
+        }
       />
-      <div className="grid items-start gap-5 lg:grid-cols-2">
-        <Sheet padded>
-          <h2 className="mb-2 text-lead font-semibold">What happened</h2>
-          <OrderHistory moves={order.moves} />
-        </Sheet>
-        <Rail label="Terms of the order">
-          <RailSection title="Stock">
-            <ul className="space-y-1">
-              {stocks.map((stock) => (
-                <li key={stock.id}>
-                  {stockWords(stock)}
-                  {stocks.length > 1 && (
-                    <span className="measure text-soft"> · {stock.labels.join(" ")}</span>
-                  )}
-                </li>
-              ))}
-            </ul>
-          </RailSection>
-          <RailSection title="Where it goes">
-            <p>
-              {order.delivery === "pick-up"
-                ? `You pick it up: ${order.shop.address.join(", ")}`
-                : order.shipTo && placeWords(order.shipTo)}
-            </p>
-          </RailSection>
-          <RailSection title="Take care">
-            <Cautions />
-          </RailSection>
-          {(frozen.mayCancel || frozen.mayAskReview) && (
-            <div className="flex flex-wrap items-center gap-x-6 gap-y-2 px-4 py-3 print:hidden">
-              {frozen.mayAskReview && <AskReview order={order} />}
-              {frozen.mayCancel && <CancelOrder order={order} paid={paid} />}
-            </div>
-          )}
-        </Rail>
-      </div>
     </>
   );
 }

@@ -95,15 +95,13 @@ function LayerLine({ layer, index, id, unit, errors }: LayerLineProps) {
   const length = depth === null ? null : "leave" in depth ? depth.leave : depth.depth;
   const field = (part: string, value?: string) => plainField(`layers[${index}].${part}`, { value });
   return (
-    <li className="grid items-end gap-x-3 gap-y-2 py-2.5 sm:grid-cols-[minmax(0,1fr)_11rem_10rem_7rem]">
+    <li className="grid items-end gap-x-3 gap-y-2 py-2.5 sm:grid-cols-[minmax(9rem,1fr)_11rem_11rem_7.5rem]">
       <div className="min-w-0 self-center">
         <p className="measure break-words">{name}</p>
         <p className="text-caption text-soft">
           {count} {count === 1 ? "line" : "lines"}
           {hidden && ", hidden in the file"}
-          {guessed && (
-            <span className="text-amber"> · {rule ? "guessed from its name" : "by its shapes"}</span>
-          )}
+          {guessed && ` · ${rule ? "guessed from its name" : "guessed from its shapes"}`}
         </p>
         <input type="hidden" name={`layers[${index}].layer`} value={name} />
       </div>

@@ -18,7 +18,8 @@ export interface RuleFacts {
 /** Where an order stands on the line from draft to shipped; what comes between is shown where it came in. */
 export function placeOnLine({ stage, heldFrom, further }: Pick<RuleFacts, "stage" | "heldFrom" | "further">) {
   const standing = stage === "needs-review" ? "quoted" : stage === "on-hold" ? heldFrom : stage;
-  const index = MAIN_LINE.findIndex((name) => name === standing);
+  const line: readonly (Stage | null)[] = MAIN_LINE;
+  const index = line.indexOf(standing);
   return Math.max(0, index) + (index >= 0 && index < MAIN_LINE.length - 1 ? Math.min(further, 0.95) : 0);
 }
 

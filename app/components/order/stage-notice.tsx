@@ -8,13 +8,7 @@ export function StageNotice({ order }: { readonly order: OrderView }): ReactNode
   const { shop } = order;
   switch (order.stage) {
     case "needs-review":
-      return (
-        <Notice title={`Somebody at ${shop.name} looks at this first`}>
-          {last?.reason ? `${last.reason} ` : ""}
-          Nothing is to pay yet. You are told by e-mail when they have looked, usually within a working day;
-          answers to open questions on this page go straight to them.
-        </Notice>
-      );
+      return <ReviewNotice order={order} reason={last?.reason ?? null} />;
     case "on-hold":
       return (
         <Notice title="On hold">
@@ -31,4 +25,25 @@ export function StageNotice({ order }: { readonly order: OrderView }): ReactNode
     default:
       return null;
   }
+}
+
+/** Who has to say something before the order can be paid: the builder, the shop, or both. */
+function ReviewNotice({ order, reason }: { readonly order: OrderView; readonly reason: string | null }) {
+  const { content, shop } = order;
+  const asks = content.kind === "frozen" ? content.unanswered : 0;
+  const shopLooks = content.kind !== "frozen" || content.reviewOpen;
+  const told = "You are told by e-mail when they have looked, usually within a working day.";
+  if (asks > 0)
+    return (
+      <Notice title={`${asks === 1 ? "One question waits" : `${asks} questions wait`} for your answer`}>
+        Answer {asks === 1 ? "it" : "them"} in the fit report beside the drawing;{" "}
+        {shopLooks ? `${shop.name} looks at the order too. ${told}` : "then you can pay."}
+      </Notice>
+    );
+  return (
+    <Notice title={`Somebody at ${shop.name} looks at this first`}>
+      {reason ? `${reason} ` : ""}
+      Nothing is to pay yet. {told}
+    </Notice>
+  );
 }

@@ -4,10 +4,15 @@ interface WaitingOrder {
   readonly stage: Stage;
   readonly expired: boolean;
   readonly holdReason: string | null;
+  /** Questions about the drawing that the builder has not answered. */
+  readonly questions: number;
 }
 
 /** What an order waits for, in a few words, and whether that is its builder's to do. */
-export function waitsFor({ stage, expired, holdReason }: WaitingOrder): { words: string; yours: boolean } {
+export function waitsFor({ stage, expired, holdReason, questions }: WaitingOrder): {
+  words: string;
+  yours: boolean;
+} {
   switch (stage) {
     case "draft":
       return { words: "your choices, then a quote", yours: true };
@@ -16,7 +21,9 @@ export function waitsFor({ stage, expired, holdReason }: WaitingOrder): { words:
         ? { words: "the quote ran out: price it again", yours: true }
         : { words: "your approval and payment", yours: true };
     case "needs-review":
-      return { words: "a look by the shop, or your answer", yours: false };
+      return questions > 0
+        ? { words: `your answer to ${questions} ${questions === 1 ? "question" : "questions"}`, yours: true }
+        : { words: "a look by the shop", yours: false };
     case "paid":
       return { words: "the shop to take it in", yours: false };
     case "received":

@@ -223,7 +223,9 @@ function unitQuestion(read: readonly ReadFile[]): UnitQuestion | null {
 }
 
 async function stockChoices(): Promise<StockChoice[]> {
-  const materials = await listMaterials(db);
+  const materials = (await listMaterials(db)).sort(
+    (one, other) => one.nominalThickness - other.nominalThickness,
+  );
   return Promise.all(
     materials.map(async (material) => {
       const [lot] = await listLots(db, material.id);

@@ -49,6 +49,9 @@ export async function frozenView(order: Order, roles: Parameters<typeof checkMov
     ),
     quote: quote ? await shownQuote(order, quote, parts, now) : null,
     checkout: await shownCheckout(order),
+    /** Somebody in the shop has to look, whatever the builder answers. */
+    reviewOpen: facts.reviewOpen,
+    unanswered: facts.unansweredAsks,
     mayCancel: checkMove("cancel", facts, roles).ok,
     mayAskReview: checkMove("ask-review", facts, roles).ok && order.reviewedAt === null,
     pieces: await shownPieces(order),

@@ -67,7 +67,8 @@ function furtherThan(
   progress: readonly { readonly stage: Stage; readonly reached: number; readonly of: number }[],
 ): number {
   const standing = order.stage === "on-hold" ? order.heldFrom : order.stage;
-  const next = MAIN_LINE[MAIN_LINE.findIndex((name) => name === standing) + 1];
+  const line: readonly (Stage | null)[] = MAIN_LINE;
+  const next = line[line.indexOf(standing) + 1];
   const there = progress.find(({ stage }) => stage === next);
   return there && there.of > 0 ? there.reached / there.of : 0;
 }

@@ -20,6 +20,8 @@ import { TextField } from "~/components/text-field";
 import { db } from "~/db/client.server";
 import { MAIN_LINE, type Stage } from "~/domain/orders";
 import { findLargestPart } from "~/flows/find-largest-part.server";
+import { openAsks } from "~/flows/order-facts.server";
+import { listFindings } from "~/models/findings.server";
 import { countByStage, type ListedOrder, pageOfOrders } from "~/models/order-list.server";
 import { currentSettings } from "~/models/settings.server";
 import type { Route } from "./+types/orders";
@@ -74,6 +76,10 @@ async function listed(order: ListedOrder, now: Date) {
     reference: order.reference,
     name: order.name,
     stage: order.stage,
+    questions:
+      order.stage === "needs-review" && order.revisionId !== null
+        ? openAsks(await listFindings(db, order.revisionId)).length
+        : 0,
     heldFrom: order.heldFrom,
     holdReason: order.holdReason,
     shape: part && silhouetteOf(part),
