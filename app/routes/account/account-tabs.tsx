@@ -4,6 +4,7 @@ import { TabLinks } from "~/components/tab-links";
 const TABS = [
   { to: "/account", label: "You" },
   { to: "/account/addresses", label: "Addresses" },
+  { to: "/account/mail", label: "E-mail" },
   { to: "/account/password", label: "Password" },
   { to: "/account/sessions", label: "Signed in at" },
 ];

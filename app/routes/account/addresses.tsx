@@ -154,7 +154,9 @@ function AddressForm({ changed, lastResult }: AddressFormProps) {
         hint="Carriers ask; freight to a home may need a lift gate."
       />
       <div className="flex flex-wrap gap-2">
-        <Button pending={pending}>{changed ? "Save" : "Add the address"}</Button>
+        <Button variant="primary" pending={pending}>
+          {changed ? "Save" : "Add the address"}
+        </Button>
         {changed && (
           <ButtonLink to="/account/addresses" variant="plain">
             Leave it

@@ -91,7 +91,9 @@ export default function Password({ actionData }: Route.ComponentProps) {
             type="password"
             autoComplete="new-password"
           />
-          <Button pending={pending}>Change the password</Button>
+          <Button variant="primary" pending={pending}>
+            Change the password
+          </Button>
         </Form>
       </Sheet>
     </>

@@ -71,7 +71,9 @@ export default function Profile({ loaderData, actionData }: Route.ComponentProps
               { term: "Works here as", value: roles, prose: true },
             ]}
           />
-          <Button pending={pending}>Save</Button>
+          <Button variant="primary" pending={pending}>
+            Save
+          </Button>
         </Form>
       </Sheet>
     </>

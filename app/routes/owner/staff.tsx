@@ -139,7 +139,9 @@ function InviteForm({
       <input type="hidden" name="intent" value="invite" />
       <TextField field={fields.email} label="E-mail" type="email" autoComplete="off" />
       <RoleBoxes legend="Roles" legendShown idPrefix={fields.roles.id} chosen={[]} field={roles} />
-      <Button pending={pending}>Mail the invitation</Button>
+      <Button variant="primary" pending={pending}>
+        Mail the invitation
+      </Button>
     </Form>
   );
 }

@@ -49,7 +49,7 @@ export default function ForgotPassword({ actionData }: Route.ComponentProps) {
           fields={[{ id: fields.email.id, label: "E-mail", errors: fields.email.errors }]}
         />
         <TextField field={fields.email} label="E-mail" type="email" autoComplete="username" />
-        <Button wide pending={pending}>
+        <Button variant="primary" wide pending={pending}>
           Mail me the link
         </Button>
       </Form>

@@ -27,7 +27,7 @@ export function HomeDrawing() {
   return (
     <svg
       viewBox="0 0 1600 800"
-      className="block h-auto w-full"
+      className="block h-auto w-[190%] max-w-none sm:w-full"
       role="img"
       aria-label="A drawing as it is read: a side with four mortises and a cable hole, cut twice; a shelf with tenons, cut three times; a back with a pocket; a door with two hinge cups."
     >

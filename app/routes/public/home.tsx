@@ -54,12 +54,16 @@ export default function Home({ loaderData }: Route.ComponentProps) {
             <ButtonLink to="/sign-in" variant="plain">
               Sign in
             </ButtonLink>
-            <ButtonLink to="/sign-up">Make an account</ButtonLink>
+            <ButtonLink to="/sign-up" variant="primary">
+              Make an account
+            </ButtonLink>
           </>
         }
       />
       <Sheet label="A drawing as it is read">
-        <HomeDrawing />
+        <div className="overflow-hidden">
+          <HomeDrawing />
+        </div>
       </Sheet>
       <ul className="grid gap-x-8 gap-y-5 md:grid-cols-3">
         {PROMISES.map(({ title, words }) => (

@@ -72,7 +72,9 @@ export default function InvitationPage({ loaderData, actionData, params }: Route
     return (
       <FormPage title="Work in the shop" lead={lead}>
         <Form method="post">
-          <Button wide>Accept</Button>
+          <Button variant="primary" wide>
+            Accept
+          </Button>
         </Form>
       </FormPage>
     );
@@ -121,7 +123,7 @@ function NewAccount({ lastResult }: { readonly lastResult: Route.ComponentProps[
         type="password"
         autoComplete="new-password"
       />
-      <Button wide pending={pending}>
+      <Button variant="primary" wide pending={pending}>
         Accept
       </Button>
     </Form>

@@ -63,7 +63,7 @@ export default function ResetPassword({ loaderData, actionData }: Route.Componen
           type="password"
           autoComplete="new-password"
         />
-        <Button wide pending={pending}>
+        <Button variant="primary" wide pending={pending}>
           Set the password
         </Button>
       </Form>

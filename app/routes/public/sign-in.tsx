@@ -73,7 +73,7 @@ export default function SignIn({ loaderData, actionData }: Route.ComponentProps)
         <input type="hidden" name="to" value={loaderData.to ?? ""} />
         <TextField field={fields.email} label="E-mail" type="email" autoComplete="username" />
         <TextField field={fields.password} label="Password" type="password" autoComplete="current-password" />
-        <Button wide pending={pending}>
+        <Button variant="primary" wide pending={pending}>
           Sign in
         </Button>
       </Form>

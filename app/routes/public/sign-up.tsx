@@ -86,7 +86,7 @@ export default function SignUp({ loaderData, actionData }: Route.ComponentProps)
           type="password"
           autoComplete="new-password"
         />
-        <Button wide pending={pending}>
+        <Button variant="primary" wide pending={pending}>
           Make the account
         </Button>
       </Form>

@@ -50,7 +50,9 @@ export default function VerifyEmail({ loaderData, actionData }: Route.ComponentP
     return (
       <FormPage title="Your address is confirmed">
         <p className="mb-4">You can pay for orders now. Receipts and news of your orders come to it.</p>
-        <ButtonLink to="/">{address ? "To my orders" : "Sign in"}</ButtonLink>
+        <ButtonLink to="/" variant="primary">
+          {address ? "To my orders" : "Sign in"}
+        </ButtonLink>
       </FormPage>
     );
   return (
@@ -71,7 +73,9 @@ export default function VerifyEmail({ loaderData, actionData }: Route.ComponentP
         ) : (
           <>
             <p>Sign in, and we mail you another link.</p>
-            <ButtonLink to="/sign-in?to=/verify-email">Sign in</ButtonLink>
+            <ButtonLink to="/sign-in?to=/verify-email" variant="primary">
+              Sign in
+            </ButtonLink>
           </>
         )}
       </div>
