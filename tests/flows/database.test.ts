@@ -1,8 +1,10 @@
+import { execFile } from "node:child_process";
+import { promisify } from "node:util";
 import { eq, sql } from "drizzle-orm";
 import { beforeEach, expect, test } from "vitest";
 import { currentDatabase, db, transact } from "~/db/client.server";
 import { migrateDatabase } from "~/db/migrate.server";
-import { orderNumbers, sessions, users } from "~/db/schema";
+import { orderNumbers, orders, sessions, users } from "~/db/schema";
 import { freshDatabase, resetDatabase } from "../support/database";
 
 freshDatabase();
@@ -74,6 +76,22 @@ test("foreign keys hold on every connection and the file is in WAL mode", async 
   );
   expect(tries.map(({ status }) => status)).toEqual(Array(8).fill("rejected"));
   expect(await db.get(sql`PRAGMA journal_mode`)).toEqual({ journal_mode: "wal" });
+});
+
+test("several processes write at once, and no order number is given twice or lost", async () => {
+  const [builder] = await db
+    .insert(users)
+    .values({ name: "Ann", email: "ann@kerfpost.example" })
+    .returning({ id: users.id });
+  const run = promisify(execFile);
+  const countUp = () =>
+    run(process.execPath, ["--import", "tsx", "tests/support/workers/count-up.ts", "25", builder?.id ?? ""], {
+      env: { ...process.env, DATABASE_URL: currentDatabase().url },
+    });
+  await Promise.all([countUp(), countUp()]);
+  const references = await db.select({ reference: orders.reference }).from(orders);
+  expect(new Set(references.map(({ reference }) => reference)).size).toBe(50);
+  expect(await db.select().from(orderNumbers)).toEqual([{ id: "orders", next: 2051 }]);
 });
 
 test("migrating again changes nothing", async () => {
