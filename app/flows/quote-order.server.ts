@@ -1,5 +1,4 @@
 import { db, type Executor, transact } from "~/db/client.server";
-import type { Finding } from "~/domain/fit";
 import type { ShopSettings } from "~/domain/orders";
 import { priceOrder as priceFacts } from "~/domain/pricing";
 import { insertFindings } from "~/models/findings.server";
@@ -14,7 +13,7 @@ import { currentSettings } from "~/models/settings.server";
 import { insertStockGroup } from "~/models/stock-groups.server";
 import { scopeOfActor } from "./actor";
 import { changeStage } from "./change-stage.server";
-import { checkOrderFit } from "./check-order-fit";
+import { checkOrderFit, type FileFinding } from "./check-order-fit";
 import { findOrderParts } from "./find-order-parts.server";
 import { listOrderParts } from "./listed-parts";
 import { answerMove, type Moved, type MoveOptions, takeMove } from "./move.server";
@@ -48,7 +47,7 @@ interface Prepared {
   readonly geometryKey: string;
   readonly files: { sha256: string; fileName: string; readingId: string }[];
   readonly stocks: readonly (StockPlan & { readonly lot: NonNullable<StockPlan["lot"]> })[];
-  readonly findings: readonly Finding[];
+  readonly findings: readonly FileFinding[];
   readonly content: QuoteContent;
   readonly settings: ShopSettings;
 }

@@ -1,7 +1,7 @@
 import { transact } from "~/db/client.server";
 import { changeStage } from "./change-stage.server";
 import { answerMove, type Moved, type MoveOptions, takeMove } from "./move.server";
-import { mailStage } from "./order-mails.server";
+import { mailSentBack, mailStage } from "./order-mails.server";
 import { answering, orRollBack, type Verdict } from "./verdict";
 import { dropQuotes } from "./write-quote.server";
 
@@ -66,7 +66,7 @@ export const sendBack = (options: MoveOptions): Promise<Verdict<Moved>> =>
           change: { quoteId: null, revisionId: null, promisedFor: null },
         }),
       );
-      await mailStage(tx, { order, from: taken.order.stage });
+      await mailSentBack(tx, { order, reason: options.reason ?? "" });
       return answerMove(order);
     }),
   );

@@ -13,6 +13,7 @@ import { recordEvent } from "~/models/events.server";
 import { enterLedger } from "~/models/ledger.server";
 import { findOrder, type Order } from "~/models/orders.server";
 import { findQuote, type Quote } from "~/models/quotes.server";
+import { currentSettings } from "~/models/settings.server";
 import { listStockGroups, reserveGroup } from "~/models/stock-groups.server";
 import { payments } from "~/services/clients.server";
 import type { Payment, Checkout as ServiceCheckout } from "~/services/payments.server";
@@ -20,6 +21,7 @@ import { askOwner } from "./ask-owner.server";
 import { changeStage } from "./change-stage.server";
 import { factsOfOrder } from "./order-facts.server";
 import { mailReceipt } from "./order-mails.server";
+import { promiseOrder } from "./promise-order.server";
 import { orRollBack, refuse, type Verdict } from "./verdict";
 
 export type CheckoutOutcome =
@@ -91,7 +93,9 @@ async function enterPayment(tx: Executor, checkout: Checkout, payment: Payment):
   await recordEvent(tx, { orderId: order.id, kind: "payment", data: { checkout: "paid" } });
 
   const misfit = await misfitOf(tx, order, quote);
-  await mailReceipt(tx, { order, quote, payment, paidAt: new Date(), inTime: misfit === null });
+  const paidAt = new Date();
+  const after = misfit === null ? await markOrderPaid(tx, { order, quote, paidAt }) : order;
+  await mailReceipt(tx, { order: after, quote, payment, paidAt, inTime: misfit === null });
   if (misfit !== null) {
     await askOwner(tx, {
       order,
@@ -102,7 +106,6 @@ async function enterPayment(tx: Executor, checkout: Checkout, payment: Payment):
     });
     return "paid-late";
   }
-  await markOrderPaid(tx, order);
   return "paid";
 }
 
@@ -118,23 +121,26 @@ async function misfitOf(tx: Executor, order: Order, quote: Quote): Promise<strin
   return verdict.ok ? null : `the order cannot be paid as it stands. ${verdict.words}`;
 }
 
-async function markOrderPaid(tx: Executor, order: Order): Promise<void> {
-  const at = new Date();
+async function markOrderPaid(
+  tx: Executor,
+  { order, quote, paidAt }: { order: Order; quote: Quote; paidAt: Date },
+): Promise<Order> {
+  const promisedFor = await promiseOf(tx, quote, paidAt);
   /* A hold that began while the builder was paying keeps the order held, and paid underneath. */
   const held = order.stage === "on-hold";
-  orRollBack(
+  const { order: paid } = orRollBack(
     await changeStage(tx, {
       order,
       to: held ? "on-hold" : "paid",
       act: "pay",
       by: { id: null, role: "system" },
       ...(held ? { underHold: { from: "quoted", to: "paid" } } : {}),
-      change: { paidAt: at, ...(held ? { heldFrom: "paid" } : {}) },
+      change: { paidAt, promisedFor, ...(held ? { heldFrom: "paid" } : {}) },
     }),
   );
   if (order.revisionId === null) throw new Error(`Order ${order.reference} was paid without a revision.`);
   for (const group of await listStockGroups(tx, order.id, order.revisionId)) {
-    if (await reserveGroup(tx, group, at)) continue;
+    if (await reserveGroup(tx, group, paidAt)) continue;
     await askOwner(tx, {
       order,
       act: "stock.short",
@@ -143,4 +149,15 @@ async function markOrderPaid(tx: Executor, order: Order): Promise<void> {
       words: `${order.reference} is paid and needs ${Math.ceil(group.sheets)} sheets of ${group.material.name}${group.lot ? `, lot ${group.lot.code}` : ""}, more than are free on the rack.`,
     });
   }
+  return paid;
+}
+
+/** The quote's day, or a later one when the payment came so late that the machines have filled up meanwhile. */
+async function promiseOf(tx: Executor, quote: Quote, paidAt: Date): Promise<Date> {
+  const promised = await promiseOrder(tx, {
+    settings: await currentSettings(tx),
+    machineMinutes: quote.machineMinutes,
+    paidAt,
+  });
+  return promised.ok && promised.promisedFor > quote.promisedFor ? promised.promisedFor : quote.promisedFor;
 }

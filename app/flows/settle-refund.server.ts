@@ -1,5 +1,4 @@
 import { type Executor, transact } from "~/db/client.server";
-import { newId } from "~/db/schema";
 import { findCheckoutById, findCheckoutByIntent } from "~/models/checkouts.server";
 import { recordEvent } from "~/models/events.server";
 import { enterLedger, owedOnQuote } from "~/models/ledger.server";
@@ -93,7 +92,6 @@ async function oursOf(tx: Executor, told: ServiceRefund): Promise<Refund | undef
   const checkout = await findCheckoutByIntent(tx, told.paymentId);
   if (!checkout) return undefined;
   await insertRefund(tx, {
-    id: newId(),
     orderId: checkout.orderId,
     checkoutId: checkout.id,
     amount: told.amount,

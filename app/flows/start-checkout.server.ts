@@ -1,5 +1,4 @@
 import { db, transact } from "~/db/client.server";
-import { newId } from "~/db/schema";
 import { checkMove } from "~/domain/orders";
 import {
   attachSession,
@@ -91,7 +90,6 @@ async function begin(
   if (amount <= 0) return refuse("already-paid", "Nothing is owed on this quote.");
   const expiresAt = new Date(now.getTime() + CHECKOUT_MINUTES * MINUTE);
   await insertCheckout(tx, {
-    id: newId(),
     orderId: order.id,
     quoteId: quote.id,
     purpose: "full",

@@ -5,7 +5,6 @@ import { checkouts } from "~/db/schema";
 export type Checkout = typeof checkouts.$inferSelect;
 
 export interface NewCheckout {
-  readonly id: string;
   readonly orderId: string;
   readonly quoteId: string;
   readonly purpose: Checkout["purpose"];

@@ -5,7 +5,8 @@ import { refunds } from "~/db/schema";
 export type Refund = typeof refunds.$inferSelect;
 
 export interface NewRefund {
-  readonly id: string;
+  /** As the form made it; a new one when there was no form. */
+  readonly id?: string;
   readonly orderId: string;
   readonly checkoutId: string;
   readonly amount: number;

@@ -385,6 +385,11 @@ describe("review", () => {
     await done(sendBack({ ...(await asked(operator, order.id)), reason: "The back is drawn twice." }));
     expect(await orderAsIs(order.id)).toMatchObject({ stage: "draft", quoteId: null });
     expect((await listQuotes(db, order.id))[0]).toMatchObject({ status: "superseded" });
+    expect((await db.select().from(outbox)).at(-1)).toMatchObject({
+      template: "sent-back",
+      recipient: builder.email,
+      payload: { text: expect.stringContaining("The back is drawn twice.") },
+    });
   });
 
   test("for a question about the drawing ends with the builder's last answer", async () => {

@@ -142,6 +142,24 @@ describe("a refund", () => {
     expect(await owedOnQuote(db, paid.orderId, paid.quoteId)).toBe(0);
   });
 
+  test("made in the payment service's own pages is entered as well", async () => {
+    const [checkout] = await listPaidCheckouts(db, paid.orderId);
+    const made = await running.services.payments.refund({
+      idempotencyKey: newId(),
+      paymentId: checkout?.paymentIntent ?? "",
+      amount: 2_500,
+      reason: "requested_by_customer",
+      metadata: {},
+    });
+    expect(made).toMatchObject({ ok: true });
+    await fake().webhooksSettled();
+    expect(await amounts("refund")).toEqual([2_500]);
+    expect(await listRefunds(db, paid.orderId)).toMatchObject([
+      { status: "done", askedBy: "payment-service", amount: 2_500 },
+    ]);
+    expect(await refused(refundOrder(form({ amount: paid.total })))).toMatchObject({ reason: "too-much" });
+  });
+
   test("on a cancelled order settles what the shop owes", async () => {
     await done(cancelOrder({ ...(await asked(owner, paid.orderId)), reason: "The builder moved away." }));
     expect((await orderAsIs(paid.orderId)).stage).toBe("cancelled");
