@@ -1,6 +1,7 @@
 import type { Drawing, DrawnPath } from "../drawing";
 import { boxExtent, boxHeight, boxUnion, boxWidth, EMPTY_BOX, pathBox } from "../geometry";
 import { groupCongruent } from "./congruence";
+import { partCovered } from "./covered-lines";
 import type { Chain } from "./joining";
 import { bareUnitOf } from "./layer-names";
 import { measureDrawn } from "./measure-drawn";
@@ -59,6 +60,7 @@ export function findParts(drawing: Drawing, rules: FindPartsRules): PartsReport 
     keepsFrame: ({ layer }) => isRestored(restored, "frame", layer),
   });
   for (const frame of frames) aside.add("frame", frame);
+  for (const chain of traced.covered) aside.add("duplicate", chain);
 
   const parts = partsOfKinds(groupCongruent(pieces, settings.equalTolerance), drawing.texts);
   return {
@@ -77,6 +79,7 @@ interface Traced {
   readonly worked: Outline[];
   readonly engraved: Chain[];
   readonly open: Chain[];
+  readonly covered: Chain[];
   readonly bridges: Bridge[];
 }
 
@@ -88,7 +91,7 @@ function traceGroups(
   tolerances: TraceTolerances,
   all: Trace,
 ): Traced {
-  const traced: Traced = { through: [], worked: [], engraved: [], open: [], bridges: [] };
+  const traced: Traced = { through: [], worked: [], engraved: [], open: [], covered: [], bridges: [] };
   for (const [group, places] of joiningGroups(cut, reader)) {
     const isWhole = places.length === drawing.paths.length;
     const trace = isWhole
@@ -98,8 +101,10 @@ function traceGroups(
           tolerances,
         );
     const { joined, outlines, flat } = trace;
+    const { open, covered } = partCovered(joined.open, outlines);
     (group === THROUGH ? traced.through : traced.worked).push(...outlines);
-    (group.startsWith("engrave") ? traced.engraved : traced.open).push(...joined.open, ...flat);
+    (group.startsWith("engrave") ? traced.engraved : traced.open).push(...open, ...flat);
+    traced.covered.push(...covered);
     traced.bridges.push(...joined.bridges);
   }
   return traced;

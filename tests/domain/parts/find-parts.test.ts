@@ -186,6 +186,16 @@ describe("duplicates", () => {
     expect(report.totals.cutLength).toBeCloseTo(300, 9);
   });
 
+  it("a line over one side of a closed polyline is set aside, one that goes on past it is open", () => {
+    const over = found([drawn(rectangle(0, 0, 100, 50)), line(10, 0, 80, 0)]);
+    expect(over.setAside).toMatchObject([{ what: "duplicate", count: 1 }]);
+    expect(over.open).toEqual([]);
+    // It equals no whole curve that was drawn, and so counts in full as drawn.
+    expect(over).toMatchObject({ duplicates: 0, drawn: { uniqueLength: 370, openChains: 1 } });
+    expect(over.totals.cutLength).toBe(300);
+    expect(found([drawn(rectangle(0, 0, 100, 50)), line(50, 0, 120, 0)]).open).toHaveLength(1);
+  });
+
   it("partly overlapping lines count in full as drawn and once as cut", () => {
     // Two squares side by side: the right side of one lies on part of the left side of the other.
     const report = found([drawn(rectangle(0, 0, 100, 100)), drawn(rectangle(100, 20, 50, 40))]);
