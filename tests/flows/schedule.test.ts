@@ -8,8 +8,19 @@ import { priceOrder } from "~/flows/price-order.server";
 import { type ScheduleSheetOptions, scheduleSheet } from "~/flows/schedule-sheet.server";
 import { startRun } from "~/flows/start-run.server";
 import { findNest, listSheets } from "~/models/nests.server";
+import { findQuote } from "~/models/quotes.server";
 import { findRunOfSheet, listRuns, listSheetsToSchedule } from "~/models/runs.server";
-import { asked, done, makeReadyDraft, makeReceived, nest, refused } from "../support/chain";
+import {
+  asked,
+  done,
+  makeApproved,
+  makePaid,
+  makeReadyDraft,
+  makeReceived,
+  nest,
+  openPayPage,
+  refused,
+} from "../support/chain";
 import { resetDatabase } from "../support/database";
 import {
   freshScene,
@@ -167,5 +178,21 @@ describe("the promise", () => {
     await transact((tx) => tx.update(nestSheets).set({ estimatedMinutes: 505 }));
     await done(scheduleSheet(plan({ day: "2026-12-08" })));
     expect(await promise()).toEqual(new Date("2026-12-11T01:00:00Z"));
+  });
+
+  test("is checked again when the money comes: later if the machines have filled up, never earlier", async () => {
+    const builder = await makePerson();
+    const prompt = await makePaid(builder, shop, running.fakes.payments);
+    expect(prompt.promisedFor).toEqual((await findQuote(db, prompt.id, prompt.quoteId ?? ""))?.promisedFor);
+
+    const late = await makeApproved(builder, shop);
+    await transact((tx) => tx.update(nestSheets).set({ estimatedMinutes: 2 * 510 }));
+    const { sessionId } = await openPayPage(builder, late.id);
+    await running.fakes.payments.pay(sessionId);
+    await running.fakes.payments.webhooksSettled();
+    const after = await orderAsIs(late.id);
+    const quoted = (await findQuote(db, late.id, late.quoteId ?? ""))?.promisedFor;
+    expect(after.stage).toBe("paid");
+    expect(Number(after.promisedFor)).toBeGreaterThan(Number(quoted));
   });
 });
