@@ -11,12 +11,14 @@ export default [
     route("verify-email", "routes/public/verify-email.tsx"),
     route("invitation/:token", "routes/public/invitation.tsx"),
     route("terms", "routes/public/terms.tsx"),
+    route("unsubscribe", "routes/public/unsubscribe.tsx"),
   ]),
 
   layout("routes/account/layout.tsx", [
     ...prefix("account", [
       index("routes/account/profile.tsx"),
       route("addresses", "routes/account/addresses.tsx"),
+      route("mail", "routes/account/mail.tsx"),
       route("password", "routes/account/password.tsx"),
       route("sessions", "routes/account/sessions.tsx"),
     ]),
@@ -32,9 +34,18 @@ export default [
     ]),
   ]),
 
-  layout("routes/shop/layout.tsx", [...prefix("shop", [index("routes/shop/queue.tsx")])]),
+  layout("routes/shop/layout.tsx", [
+    ...prefix("shop", [
+      index("routes/shop/queue.tsx"),
+      route("orders/:orderId", "routes/shop/order.tsx"),
+      route("nest", "routes/shop/nest-desk.tsx"),
+      route("nest/:nestId", "routes/shop/nest.tsx"),
+    ]),
+  ]),
 
-  layout("routes/owner/layout.tsx", [...prefix("owner", [route("staff", "routes/owner/staff.tsx")])]),
+  layout("routes/owner/layout.tsx", [
+    ...prefix("owner", [route("staff", "routes/owner/staff.tsx"), route("mail", "routes/owner/mail.tsx")]),
+  ]),
 
   ...prefix("api", [
     route("uploads", "routes/api/uploads.ts"),
@@ -43,6 +54,9 @@ export default [
       route("events", "routes/api/events.ts"),
       route("geometry/:key", "routes/api/geometry.ts"),
       route("drawings/:drawingId", "routes/api/drawing.ts"),
+      route("messages", "routes/api/messages.ts"),
+      route("messages/read", "routes/api/thread-read.ts"),
+      route("attachments/:attachmentId", "routes/api/attachment.ts"),
     ]),
   ]),
 

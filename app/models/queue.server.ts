@@ -239,3 +239,13 @@ export async function countShippedSince(executor: Executor, since: Date): Promis
     .where(and(eq(orders.stage, "shipped"), gte(orders.shippedAt, since)));
   return row?.shipped ?? 0;
 }
+
+/** Orders by their ids, the earliest promise first. */
+export async function listOrdersById(executor: Executor, ids: readonly string[]): Promise<Order[]> {
+  if (ids.length === 0) return [];
+  return executor
+    .select()
+    .from(orders)
+    .where(inArray(orders.id, [...ids]))
+    .orderBy(orders.promisedFor, orders.reference);
+}

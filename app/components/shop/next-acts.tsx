@@ -68,7 +68,7 @@ export function NextActs({ order }: { readonly order: StaffOrderView }) {
             intent="cut-all"
             state={acts.cut}
             primary={false}
-            label={`Mark all ${count(at("nested").length, "piece")} cut`}
+            label={`Mark ${count(at("nested").length, "piece")} cut without a run`}
           />
         )}
         {live && at("cut").length > 0 && <TabsOff order={order} />}
@@ -145,7 +145,7 @@ function TabsOff({ order }: { readonly order: StaffOrderView }) {
 function ToShipping({ order }: { readonly order: StaffOrderView }) {
   if (order.mayShip)
     return (
-      <ButtonLink to={`/shipping/${order.id}`} variant="primary" wide>
+      <ButtonLink to={`/shipping/${order.id}`} variant={order.acts.ship?.may ? "primary" : "plain"} wide>
         {order.delivery === "pick-up" ? "Hand over" : "Pack and ship"}
       </ButtonLink>
     );

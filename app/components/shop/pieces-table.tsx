@@ -71,6 +71,6 @@ function remakeWords(pieces: readonly Piece[], lost: Piece): string {
     (piece) => piece.remake && piece.label === lost.label && piece.number === lost.number && piece !== lost,
   );
   return again
-    ? `: ${again.cause ?? "made again"}; the ${again.payer} pays. The remake is ${again.stage}.`
+    ? `: ${again.cause?.replace(/\.$/, "") ?? "made again"}; the ${again.payer} pays. The remake is ${again.stage}.`
     : "";
 }
