@@ -6,11 +6,18 @@ import { PASSWORD_MAX, PASSWORD_MIN } from "./password-rules";
 const email = z.preprocess(
   (value) => (typeof value === "string" ? value.trim().toLowerCase() : value),
   z.email({
-    error: ({ input }) => (input === undefined ? "Your e-mail address" : "An address like ann@example.com"),
+    error: ({ input }) =>
+      input === undefined ? "Type your e-mail address" : "An address like ann@example.com",
   }),
 );
-const name = z.string({ error: "Your name" }).trim().min(1, "Your name").max(80, "At most 80 letters");
-const password = z.string({ error: "Your password" }).max(PASSWORD_MAX, `At most ${PASSWORD_MAX} letters`);
+const name = z
+  .string({ error: "Type your name" })
+  .trim()
+  .min(1, "Type your name")
+  .max(80, "At most 80 letters");
+const password = z
+  .string({ error: "Type your password" })
+  .max(PASSWORD_MAX, `At most ${PASSWORD_MAX} letters`);
 const newPassword = z
   .string({ error: `At least ${PASSWORD_MIN} letters` })
   .min(PASSWORD_MIN, `At least ${PASSWORD_MIN} letters`)

@@ -16,6 +16,7 @@ const AREAS: readonly Area[] = [
   { to: "/shipping", label: "Shipping", act: "shipping.edit" },
   { to: "/owner/refunds", label: "Refunds", act: "refund.make" },
   { to: "/owner/staff", label: "Staff", act: "staff.invite" },
+  { to: "/owner/mail", label: "Mail", act: "mail.resend" },
   { to: "/account", label: "Account", act: "account.edit" },
 ];
 

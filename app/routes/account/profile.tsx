@@ -67,7 +67,7 @@ export default function Profile({ loaderData, actionData }: Route.ComponentProps
           <RadioField field={fields.shownUnit} label="Lengths are shown in" choices={UNITS} />
           <DefinitionList
             items={[
-              { term: "E-mail", value: email, note: emailVerified ? "confirmed" : "not confirmed yet" },
+              { term: "Mail goes to", value: email, note: emailVerified ? "confirmed" : "not confirmed yet" },
               { term: "Works here as", value: roles, prose: true },
             ]}
           />

@@ -45,7 +45,7 @@ export default function Sessions({ loaderData }: Route.ComponentProps) {
   return (
     <>
       <AccountTabs at="/account/sessions" />
-      <Sheet>
+      <Sheet padded>
         <Table caption="Where you are signed in">
           <TableHead>
             <HeadCell>Place</HeadCell>
