@@ -29,7 +29,6 @@ const BY: Readonly<Record<string, string>> = {
   operator: "the shop",
   clerk: "the shop",
   owner: "the shop",
-  system: "by itself",
 };
 
 /** Everything that happened to the order, newest first, in plain words. */
@@ -43,7 +42,7 @@ export function OrderHistory({ moves }: { readonly moves: readonly Move[] }) {
           </span>
           <span>
             {ACTS[move.act] ?? move.act}
-            <span className="text-soft">, {BY[move.by] ?? move.by}</span>
+            {BY[move.by] && <span className="text-soft">, {BY[move.by]}</span>}
             {move.reason && <span className="block text-soft">{move.reason}</span>}
           </span>
         </li>

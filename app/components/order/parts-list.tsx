@@ -48,6 +48,7 @@ export function PartsList({ parts, focus, note, children }: PartsListProps) {
                     >
                       {part.label}
                       {part.name !== part.letter && ` ${part.name}`}
+                      {part.mirrorOf && <span className="text-soft"> mirrors {part.mirrorOf}</span>}
                     </RowButton>
                   </RowHead>
                   <Cell numeric>
