@@ -1,5 +1,5 @@
 import { db } from "~/db/client.server";
-import { newId } from "~/db/schema";
+import { newId } from "~/db/new-id";
 import { cancelOrder } from "~/flows/cancel-order.server";
 import { holdOrder } from "~/flows/hold-order.server";
 import { refundOrder } from "~/flows/refund-order.server";

@@ -1,7 +1,5 @@
 import { integer, text } from "drizzle-orm/sqlite-core";
-
-/** 128 random bits: an id in a URL cannot be guessed. */
-export const newId = (): string => crypto.randomUUID().replaceAll("-", "");
+import { newId } from "../new-id";
 
 export const id = () => text().primaryKey().$defaultFn(newId);
 /** An instant, UTC, milliseconds. */

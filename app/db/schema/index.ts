@@ -1,4 +1,4 @@
-export { newId } from "./columns";
+export { newId } from "../new-id";
 export * from "./drawings";
 export * from "./floor";
 export * from "./money";

@@ -1,6 +1,7 @@
 import { index, integer, real, sqliteTable, text, uniqueIndex } from "drizzle-orm/sqlite-core";
 import type { PieceStage, Role, ShipTo, Stage } from "~/domain/orders";
-import { createdAt, flag, id, instant, newId, version } from "./columns";
+import { newId } from "../new-id";
+import { createdAt, flag, id, instant, version } from "./columns";
 import { users } from "./people";
 import { lots, materials } from "./shop";
 

@@ -1,7 +1,8 @@
 import { index, integer, primaryKey, sqliteTable, text, uniqueIndex } from "drizzle-orm/sqlite-core";
 import type { Role } from "~/domain/orders";
 import type { LengthUnit } from "~/domain/units";
-import { createdAt, flag, id, instant, newId } from "./columns";
+import { newId } from "../new-id";
+import { createdAt, flag, id, instant } from "./columns";
 
 export const users = sqliteTable("users", {
   id: text().primaryKey().$defaultFn(newId),
