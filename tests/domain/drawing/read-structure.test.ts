@@ -105,7 +105,7 @@ describe("blocks that would never end", () => {
     );
     expect(drawing.ignored).toEqual([{ type: "INSERT", layer: "0", count: 1, why: "too-many" }]);
     expect(totalLength(drawing)).toBe(5);
-    expect(performance.now() - start).toBeLessThan(1000);
+    expect(performance.now() - start).toBeLessThan(5000);
   });
 
   it("counts a bomb without anything in it too", () => {
