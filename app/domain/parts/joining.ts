@@ -80,7 +80,16 @@ export function joinPaths(paths: readonly DrawnPath[], tolerances: JoinTolerance
     loops.push(chainOf(graph.pathOf(halves, true), membersOf(halves)));
   }
   const branches = graph.leaving.filter((leaving) => leaving.length > 2).length;
-  return { loops, open, bridges, branches };
+  return { loops: inDrawnOrder(loops), open: inDrawnOrder(open), bridges, branches };
+}
+
+/** By the first drawn path in each, so that copies are numbered as they were drawn. */
+function inDrawnOrder(chains: readonly Chain[]): Chain[] {
+  const keyed = chains.map((chain) => ({
+    chain,
+    first: chain.members.reduce((least, member) => Math.min(least, member), Infinity),
+  }));
+  return keyed.sort((one, other) => one.first - other.first).map(({ chain }) => chain);
 }
 
 export const pathStart = (path: Path): Point => startOf(path.curves[0]);

@@ -72,6 +72,13 @@ describe("equal parts", () => {
     );
   });
 
+  it("are numbered in the order they are drawn, exploded or not", () => {
+    const copy = (x: number) => turnedPaths([rectangle(0, 0, 90, 60)], placed(0, x, 0))[0];
+    const paths = [...exploded(copy(0)), drawn(copy(200)), ...exploded(copy(400)), drawn(copy(600))];
+    const [{ copies }] = findParts(drawingOf(paths), { layers: [] }).parts;
+    expect(copies.map(({ move }) => Math.round(move.x))).toEqual([0, 200, 400, 600]);
+  });
+
   it("a mirror image is another part that names its twin", () => {
     const parts = partsOf([
       ...bracket,
