@@ -10,6 +10,7 @@ import { blockKey, type Item, itemWeight, type WeighedBlock } from "./block-grap
 import type { DrawnPath, DrawnText, IgnoredReason } from "./drawing";
 import type { Insert } from "./entity-content";
 import type { LayerTable } from "./layer-table";
+import { FARTHEST } from "./numbers";
 import { readTexts } from "./texts";
 
 /** Curves that inserts may come to in one drawing; an insert that would go beyond is left out whole and listed. */
@@ -25,6 +26,10 @@ interface Standing {
 }
 
 const ON_THE_DRAWING: Standing = { place: IDENTITY, block: null, layer: null, hidden: false };
+
+/** Scales multiply from block to block; a map that throws things out of reach is damage. */
+const isWithinReach = (place: Affine): boolean =>
+  Object.values(place).every((value) => Math.abs(value) <= FARTHEST);
 
 /** Collects what the modelspace items come to once every block is expanded. */
 export class Expansion {
@@ -93,6 +98,10 @@ export class Expansion {
     for (let row = 0; row < insert.rows; row++) {
       for (let column = 0; column < insert.columns; column++) {
         const place = affineCompose(standing.place, insert.place(column, row, block.base));
+        if (!isWithinReach(place)) {
+          this.#ignore(entity.type, layer, "damaged");
+          continue;
+        }
         for (const inner of block.items) this.#add(inner, { place, block: block.name, layer, hidden });
       }
     }

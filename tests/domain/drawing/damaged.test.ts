@@ -234,24 +234,34 @@ describe("missing and foreign marks", () => {
 });
 
 describe("numbers", () => {
-  it.each(["nan", "NaN", "inf", "Infinity", "-Infinity", "1e400", "", "abc", "0x10", "1,2,3", "1.5.2"])(
-    "lists an entity with the number %j as damaged",
-    (text) => {
-      const drawing = readEntities(
-        [
-          [0, "LINE"],
-          [8, "Cut"],
-          [10, text],
-          [20, 0],
-          [11, 5],
-          [21, 0],
-        ],
-        lineEntity(0, 0, 1, 0),
-      );
-      expect(drawing.ignored).toEqual([{ type: "LINE", layer: "Cut", count: 1, why: "damaged" }]);
-      expect(totalLength(drawing)).toBe(1);
-    },
-  );
+  it.each([
+    "nan",
+    "NaN",
+    "inf",
+    "Infinity",
+    "-Infinity",
+    "1e400",
+    "1e300",
+    "",
+    "abc",
+    "0x10",
+    "1,2,3",
+    "1.5.2",
+  ])("lists an entity with the number %j as damaged", (text) => {
+    const drawing = readEntities(
+      [
+        [0, "LINE"],
+        [8, "Cut"],
+        [10, text],
+        [20, 0],
+        [11, 5],
+        [21, 0],
+      ],
+      lineEntity(0, 0, 1, 0),
+    );
+    expect(drawing.ignored).toEqual([{ type: "LINE", layer: "Cut", count: 1, why: "damaged" }]);
+    expect(totalLength(drawing)).toBe(1);
+  });
 
   it("mends a decimal comma and a Fortran exponent, and says so", () => {
     const drawing = readEntities(
@@ -276,6 +286,16 @@ describe("numbers", () => {
     expect(drawing.notes).toEqual([
       "Numbers of 2 entities were written with a comma or the letter D and were mended.",
     ]);
+  });
+
+  it("lists an insert whose scales throw it out of reach", () => {
+    const chain = Array.from({ length: 30 }, (_, i) => ({
+      name: `C${i}`,
+      entities: i === 0 ? circleEntity(1, 1, 1) : insertEntity(`C${i - 1}`, 0, 0, [41, 1e10], [42, 1e10]),
+    }));
+    const drawing = read(dxf({ blocks: chain, entities: insertEntity("C29", 0, 0) }));
+    expect(drawing.paths).toEqual([]);
+    expect(drawing.ignored).toEqual([{ type: "INSERT", layer: "0", count: 1, why: "damaged" }]);
   });
 
   it("lists what lacks a number, has no size or no vertices", () => {
