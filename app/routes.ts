@@ -40,6 +40,7 @@ export default [
       route("orders/:orderId", "routes/shop/order.tsx"),
       route("nest", "routes/shop/nest-desk.tsx"),
       route("nest/:nestId", "routes/shop/nest.tsx"),
+      route("schedule", "routes/shop/schedule.tsx"),
     ]),
   ]),
 

@@ -5,8 +5,8 @@ import { offcutOf, type SheetBox, type SheetPart, type SheetView } from "./sheet
 
 /** Room around the sheet for its outline, in millimetres. */
 const AROUND = 12;
-/** A label is written where its part is at least so large, in millimetres on the sheet. */
-const LABEL_ROOM = { wide: 190, short: 80, high: 45 };
+/** A label is written where its part is at least so large, in millimetres on the sheet; on a phone only where it is `far` as wide and high. */
+const LABEL_ROOM = { wide: 190, short: 80, high: 45, far: 2.6 };
 const PATTERNS = ["plain", "lines", "dots", "level", "cross"] as const;
 
 interface SheetViewerProps {
@@ -148,6 +148,8 @@ function PartWords({ sheet }: { readonly sheet: SheetView }) {
         const wide = box.maxX - box.minX;
         if (box.maxY - box.minY < LABEL_ROOM.high || wide < LABEL_ROOM.short) return null;
         const isShort = wide < LABEL_ROOM.wide;
+        const onPhone =
+          wide >= LABEL_ROOM.wide * LABEL_ROOM.far && box.maxY - box.minY >= LABEL_ROOM.high * LABEL_ROOM.far;
         return (
           <text
             key={id}
@@ -158,7 +160,7 @@ function PartWords({ sheet }: { readonly sheet: SheetView }) {
             paintOrder="stroke"
             strokeWidth="4"
             strokeLinejoin="round"
-            className={`measure fill-ink stroke-sheet text-[0.625rem] font-semibold ${isShort ? "hidden sm:block" : ""}`}
+            className={`measure fill-ink stroke-sheet text-[0.625rem] font-semibold ${onPhone ? "" : "hidden sm:block"}`}
           >
             {isShort ? label.split(" ").at(-1) : label}
           </text>

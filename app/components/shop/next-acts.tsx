@@ -98,7 +98,7 @@ function NestLinks({ order }: { readonly order: StaffOrderView }) {
         key={stock.id}
         wide
         variant="primary"
-        to={`/shop/nest?${new URLSearchParams({ stock: `${stock.materialId}:${stock.lotId ?? ""}`, order: order.id })}`}
+        to={`/shop/nest?${new URLSearchParams({ stock: `${stock.materialId}.${stock.lotId ?? ""}`, order: order.id })}`}
       >
         {`Nest ${count(waiting(stock.id), "piece")} of ${stock.material}`}
       </ButtonLink>

@@ -19,12 +19,12 @@ export interface StockChoice {
   readonly lotId: string | null;
 }
 
-/** A stock as addresses and forms carry it: `material:lot`, the lot empty where there is none. */
+/** A stock as addresses and forms carry it: `material.lot`, the lot empty where there is none. */
 export function readStock(text: string | null): StockChoice | null {
-  const [materialId, lotId] = text?.split(":") ?? [];
+  const [materialId, lotId] = text?.split(".") ?? [];
   return materialId ? { materialId, lotId: lotId || null } : null;
 }
-const stockKey = ({ materialId, lotId }: StockChoice): string => `${materialId}:${lotId ?? ""}`;
+const stockKey = ({ materialId, lotId }: StockChoice): string => `${materialId}.${lotId ?? ""}`;
 
 const describeStock = (material: Material, lot: Lot | null | undefined) => ({
   name: material.name,
