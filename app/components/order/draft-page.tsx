@@ -136,13 +136,13 @@ export function DraftPage({ order, draft }: DraftPageProps) {
 }
 
 function fitWaitsFor({ files }: DraftView): string | null {
-  const without = files.filter(({ state, materialId }) => state === "read" && materialId === null);
+  const without = files.filter(({ kinds, materialId }) => kinds > 0 && materialId === null);
   return without.length > 0 ? "Choose the stock: the fit is checked against its measured thickness." : null;
 }
 
 /** The stock of all the parts, where they have one in common. */
 function stockNote({ files, stocks }: DraftView): string | undefined {
-  const ids = new Set(files.filter(({ state }) => state === "read").map(({ materialId }) => materialId));
+  const ids = new Set(files.filter(({ kinds }) => kinds > 0).map(({ materialId }) => materialId));
   const stock = ids.size === 1 ? stocks.find(({ id }) => ids.has(id)) : undefined;
   return stock && `${stock.name}${stock.measured ? `, measures ${formatThickness(stock.measured)}` : ""}`;
 }

@@ -6,13 +6,15 @@ interface DropPlaceProps {
   /** As large as the sheet, or a line at the foot of a list. */
   readonly size: "sheet" | "line";
   readonly label: string;
+  /** Picking a file is the one act of the page. */
+  readonly primary?: boolean;
   /** What may be dropped, with its limits. */
   readonly words: ReactNode;
   readonly children?: ReactNode;
 }
 
 /** A place where drawings are dropped or picked; the picker is a real file input, so that every key and reader works. */
-export function DropPlace({ onFiles, size, label, words, children }: DropPlaceProps) {
+export function DropPlace({ onFiles, size, label, primary = false, words, children }: DropPlaceProps) {
   const [over, setOver] = useState(false);
   const id = useId();
   const drop = (event: DragEvent) => {
@@ -52,7 +54,7 @@ export function DropPlace({ onFiles, size, label, words, children }: DropPlacePr
         />
         <label
           htmlFor={id}
-          className={`${buttonLook(large ? "primary" : "plain", large ? "large" : "small")} peer-focus-visible:outline-2 peer-focus-visible:outline-offset-2 peer-focus-visible:outline-blue`}
+          className={`${buttonLook(primary ? "primary" : "plain", large ? "large" : "small")} peer-focus-visible:outline-2 peer-focus-visible:outline-offset-2 peer-focus-visible:outline-blue`}
         >
           {label}
         </label>

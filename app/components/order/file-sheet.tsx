@@ -56,10 +56,21 @@ export function FileSheet({ orderId, version, after, file, stocks, alone }: File
           {file.unit !== null && file.materialId !== null && (
             <FileChoice file={file} after={after} stocks={stocks} />
           )}
-          <div>
-            <h4 className="font-semibold">Layers</h4>
-            <LayersPanel file={file} after={after} />
-          </div>
+          {file.kinds === 0 && (
+            <p className="border-l-4 border-amber bg-amber-wash px-4 py-3">
+              No part was found in it: there is no closed outline. What it holds is listed under “Not cut”.
+            </p>
+          )}
+          {file.layers.length > 0 && (
+            <details open={alone} className="group">
+              <summary className="inline-flex min-h-7 items-center gap-2 pointer-coarse:min-h-11">
+                <h4 className="font-semibold">Layers</h4>
+                <span className="text-soft">{layerWords(file)}</span>
+                <span className="text-blue group-open:hidden">show</span>
+              </summary>
+              <LayersPanel file={file} after={after} />
+            </details>
+          )}
           <div>
             <h4 className="font-semibold">Not cut</h4>
             {file.leftOut.length === 0 ? (
@@ -76,6 +87,11 @@ export function FileSheet({ orderId, version, after, file, stocks, alone }: File
       )}
     </section>
   );
+}
+
+function layerWords({ layers }: DraftFile): string {
+  const guessed = layers.filter((layer) => layer.guessed).length;
+  return `${layers.length}, ${guessed === 0 ? "as you said" : `${guessed} guessed`}`;
 }
 
 function FileChoice({ file, after, stocks }: Pick<FileSheetProps, "file" | "after" | "stocks">) {

@@ -36,7 +36,7 @@ interface FirstQuestionsProps {
 /** At most two questions of a new order: is the size right, and what is it cut from. Nothing when both are answered. */
 export function FirstQuestions({ question, files, stocks, after }: FirstQuestionsProps) {
   const act = useAct("start");
-  const stockless = files.filter(({ state, materialId }) => state === "read" && materialId === null);
+  const stockless = files.filter(({ kinds, materialId }) => kinds > 0 && materialId === null);
   const [unit, setUnit] = useState<LengthUnit | null>(null);
   const [form, fields] = useForm({
     id: "first-questions",

@@ -50,7 +50,8 @@ export function OrderDrawing({ orderId, geometryKey, drawings, parts, findings, 
             hovered={letterOf(focus.hovered)}
             onHover={(letter) => focus.hover(labelOf(letter))}
             selected={letterOf(focus.selected)}
-            onSelect={(letter) => focus.select(labelOf(letter))}
+            onSelect={(letter, at) => focus.select(labelOf(letter), at)}
+            spot={focus.spot}
             pins={pins}
             onPin={(number) => document.getElementById(`finding-${number}`)?.focus()}
             {...(drawings.length > 1

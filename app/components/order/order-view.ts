@@ -85,6 +85,8 @@ export interface DraftFile {
   readonly unit: LengthUnit | null;
   readonly materialId: string | null;
   readonly sets: number;
+  /** Kinds of part found in it. */
+  readonly kinds: number;
   readonly layers: readonly ShownLayer[];
   /** Set aside, not read, left open: everything of the drawing that is not cut, in words. */
   readonly leftOut: readonly string[];

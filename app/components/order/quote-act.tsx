@@ -64,20 +64,26 @@ export function QuoteAct({ version, requestId, files, findings, delivered }: Quo
 }
 
 function stillOpen({ files, delivered }: Pick<QuoteActProps, "files" | "delivered">): Open[] {
-  const several = files.length > 1;
-  const of = (file: DraftFile) => (several ? ` of ${file.fileName}` : "");
+  const withParts = files.filter(({ kinds }) => kinds > 0);
   return [
     ...(files.length === 0 ? [{ words: "Add a drawing", at: "#files" }] : []),
     ...files.flatMap((file): Open[] => {
       const at = `#file-${file.number}`;
+      if (file.state === "queued") return [{ words: `${file.fileName} is being read`, at }];
       if (file.state === "failed")
         return [{ words: `${file.fileName} cannot be read: remove or replace it`, at }];
-      if (file.state === "queued") return [{ words: `${file.fileName} is being read`, at }];
-      return [
-        ...(file.unit === null ? [{ words: `Confirm the size${of(file)}`, at: "#questions" }] : []),
-        ...(file.materialId === null ? [{ words: `Choose the stock${of(file)}`, at: "#questions" }] : []),
-      ];
+      return file.kinds === 0 ? [{ words: `No part in ${file.fileName}: remove or replace it`, at }] : [];
     }),
+    ...toAnswer("Confirm the size", withParts, ({ unit }) => unit === null),
+    ...toAnswer("Choose the stock", withParts, ({ materialId }) => materialId === null),
     ...(delivered ? [] : [{ words: "Say where it goes", at: "#delivery" }]),
   ];
+}
+
+/** One line for a question, however many drawings it is open for. */
+function toAnswer(act: string, files: readonly DraftFile[], isOpen: (file: DraftFile) => boolean): Open[] {
+  const open = files.filter(isOpen);
+  if (open.length === 0) return [];
+  const of = files.length === 1 ? "" : ` of ${open.length} ${open.length === 1 ? "drawing" : "drawings"}`;
+  return [{ words: `${act}${of}`, at: "#questions" }];
 }

@@ -147,6 +147,7 @@ async function draftFiles({ files, interpretation }: OrderParts): Promise<DraftF
       unit: chosen?.unit ?? null,
       materialId: chosen?.materialId ?? null,
       sets: chosen?.sets ?? 1,
+      kinds: file.state === "read" ? file.geometry.report.parts.length : 0,
       layers: file.state === "read" ? shownLayers(file, chosen?.layers ?? []) : [],
       leftOut: file.state === "read" ? leftOut(file) : [],
     };

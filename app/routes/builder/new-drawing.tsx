@@ -73,6 +73,7 @@ export default function NewDrawing({ loaderData }: Route.ComponentProps) {
       <DropPlace
         size="sheet"
         label={uploads.length > 0 ? "Add another" : "Choose drawings"}
+        primary={uploads.length === 0}
         words={
           <>
             Drop drawings here. {limitWords(limits)} Draw outlines as closed lines at full size; lettering and
