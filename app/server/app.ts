@@ -75,7 +75,7 @@ function createApp(): express.Express {
       serializers: {
         req: ({ method, url }: { method: string; url: string }) => ({
           method,
-          url: url.replace(/token=[^&]*/g, "token=…"),
+          url: url.replace(/(token=|\/invitation\/)[^&?/]*/g, "$1…"),
         }),
         res: ({ statusCode }: { statusCode: number }) => ({ statusCode }),
       },

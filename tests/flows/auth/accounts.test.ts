@@ -117,3 +117,16 @@ test("sign-ins from one place are limited, to whichever account they go", async 
     expect(await tryTo(`p${attempt}@kerfpost.example`)).toBeNull();
   expect(await tryTo("ann@kerfpost.example")).toMatch(/^Too many tries/);
 });
+
+test("a session in use is prolonged once a day, and its cookie with it", async () => {
+  await signUp(ANN);
+  const cookie = (await cookieOf(ANN.email, ANN.password)) ?? "";
+  expect((await argsFor("/", { cookie })).replied.headers.getSetCookie()).toEqual([]);
+  const DAY = 86_400_000;
+  const beforeToday = new Date(Date.now() + 28 * DAY);
+  await db.update(sessions).set({ expiresAt: beforeToday });
+  const { replied } = await argsFor("/", { cookie, asked: true });
+  expect(replied.headers.getSetCookie().join()).toMatch(/^kerfpost\.session_token=.+Max-Age=2592000/);
+  const [session] = await db.select().from(sessions);
+  expect(session?.expiresAt.getTime()).toBeGreaterThan(Date.now() + 29 * DAY);
+});

@@ -1,7 +1,7 @@
 /** Requests as a browser makes them, for what stands behind the session and the guards. */
 import { RouterContextProvider } from "react-router";
 import { CLIENT_ADDRESS_HEADER } from "~/auth/auth.server";
-import { sessionMiddleware } from "~/auth/session.server";
+import { currentPerson, sessionMiddleware } from "~/auth/session.server";
 import { signInWithPassword } from "~/auth/sign-in.server";
 import { db } from "~/db/client.server";
 import { outbox } from "~/db/schema";
@@ -12,6 +12,8 @@ interface Asking {
   readonly method?: string;
   /** Network address the server saw. */
   readonly from?: string;
+  /** The page itself asks who is there. */
+  readonly asked?: boolean;
 }
 
 export function requestTo(
@@ -28,11 +30,15 @@ export function requestTo(
 export async function argsFor(path: string, asking: Asking = {}) {
   const request = requestTo(path, asking);
   const context = new RouterContextProvider();
-  await sessionMiddleware(
+  const replied = await sessionMiddleware(
     { request, context, params: {}, url: new URL(request.url), pattern: "" },
-    async () => new Response(),
+    async () => {
+      if (asking.asked) await currentPerson(context);
+      return new Response();
+    },
   );
-  return { request, context };
+  if (!replied) throw new Error("The middleware gave no reply.");
+  return { request, context, replied };
 }
 
 /** The cookie of a session begun with this password; undefined when it is refused. */
