@@ -41,7 +41,8 @@ export function joiningGroups(paths: readonly DrawnPath[], reader: LayerReader):
   for (let i = 0; i < paths.length; i++) {
     const reading = reader(paths[i].layer);
     const kind = reading?.kind ?? "outside";
-    const isThrough = kind === "outside" || kind === "cut-through";
+    // What was set aside and is restored is cut like any other line.
+    const isThrough = kind === "outside" || kind === "cut-through" || kind === "set-aside";
     const key = isThrough ? THROUGH : `${kind} ${JSON.stringify(reading?.depth ?? null)}`;
     const held = groups.get(key);
     if (held) held.push(i);

@@ -133,6 +133,11 @@ describe("what is set aside", () => {
     const restored = [{ what: "frame" as const, layer: "0" }];
     expect(found(paths).totals).toMatchObject({ parts: 1, holes: 0 });
     expect(found(paths, { restored }).totals).toMatchObject({ parts: 1, holes: 1 });
+    const noted = [drawn(rectangle(0, 0, 200, 100)), ...exploded(rectangle(300, 0, 200, 100), "NOTES")];
+    expect(found(noted).totals.parts).toBe(1);
+    expect(found(noted, { restored: [{ what: "note", layer: "NOTES" }] }).parts).toMatchObject([
+      { quantity: 2 },
+    ]);
   });
 
   it("hidden layers and notes, which still count as drawn", () => {
