@@ -1,9 +1,15 @@
 import { transact } from "~/db/client.server";
 import { checkMove, mayDo } from "~/domain/orders";
 import { recordEvent } from "~/models/events.server";
-import { type FindingAnswer, insertFindingAnswer, listFindings } from "~/models/findings.server";
+import {
+  type AnsweredFinding,
+  type FindingAnswer,
+  insertFindingAnswer,
+  listFindings,
+} from "~/models/findings.server";
 import { newMessageId } from "~/models/messages.server";
 import { findOrder } from "~/models/orders.server";
+import { listParts } from "~/models/parts.server";
 import { type Actor, scopeOfActor } from "./actor";
 import { changeStage } from "./change-stage.server";
 import { answerMove, type Moved } from "./move.server";
@@ -46,7 +52,7 @@ export async function answerFinding(options: AnswerFindingOptions): Promise<Verd
           authorId: actor.id,
           audience: "both",
           body: note?.trim() ?? "",
-          partLabel: finding.content.part,
+          partLabel: labelOf(finding, await listParts(tx, order.revisionId)),
           spot: finding.content.at,
           files: [],
           now: new Date(),
@@ -68,4 +74,11 @@ export async function answerFinding(options: AnswerFindingOptions): Promise<Verd
       return answerMove(after);
     }),
   );
+}
+
+/** The label in the part list of the part a finding is about. */
+function labelOf({ content }: AnsweredFinding, parts: Awaited<ReturnType<typeof listParts>>): string | null {
+  const { part, fileSha } = content;
+  const found = parts.find((one) => one.letter === part && (!fileSha || one.fileSha === fileSha));
+  return found?.label ?? null;
 }

@@ -2,10 +2,6 @@ import { SNIFFED_BYTES, sniffContent } from "~/domain/drawing";
 
 export { SNIFFED_BYTES } from "~/domain/drawing";
 
-/** One file, bytes. */
-export const ATTACHMENT_MAX_BYTES = 10 * 1024 * 1024;
-export const ATTACHMENTS_MAX = 5;
-
 export type AttachmentType =
   | { readonly ok: true; readonly contentType: string }
   | { readonly ok: false; readonly reason: string };

@@ -1,5 +1,5 @@
 import { transact } from "~/db/client.server";
-import { mayDo } from "~/domain/orders";
+import { MESSAGE_LIMITS, mayDo } from "~/domain/orders";
 import type { KeptFile } from "~/models/attachments.server";
 import { findMessage, type Message } from "~/models/messages.server";
 import { findOrder } from "~/models/orders.server";
@@ -22,18 +22,16 @@ export interface PostMessageOptions {
   readonly now?: Date;
 }
 
-export const LONGEST_MESSAGE = 4_000;
-
 /** Writes in an order's thread and mails the other side. */
 export async function postMessage(options: PostMessageOptions): Promise<Verdict<{ messageId: string }>> {
   const { actor, orderId, messageId, audience, partLabel = null, spot = null, files = [] } = options;
   const body = options.body.replaceAll("\r\n", "\n").trim();
   if (!mayDo(actor.roles, "order.message")) return refuse("not-allowed", "You cannot write here.");
   if (body === "" && files.length === 0) return refuse("incomplete", "Write something, or attach a file.");
-  if (body.length > LONGEST_MESSAGE)
+  if (body.length > MESSAGE_LIMITS.characters)
     return refuse(
       "invalid",
-      `A message holds ${LONGEST_MESSAGE.toLocaleString("en-US")} characters; this one has ${body.length.toLocaleString("en-US")}. Send it in two.`,
+      `A message holds ${MESSAGE_LIMITS.characters.toLocaleString("en-US")} characters; this one has ${body.length.toLocaleString("en-US")}. Send it in two.`,
     );
   const scope = scopeOfActor(actor);
   if (audience === "staff" && scope.kind !== "staff")

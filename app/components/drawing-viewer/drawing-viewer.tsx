@@ -3,6 +3,7 @@ import {
   type KeyboardEvent,
   type MouseEvent,
   type PointerEvent,
+  useEffect,
   useId,
   useMemo,
   useRef,
@@ -16,9 +17,10 @@ import { PartLabels } from "./part-labels";
 import { PartShape } from "./part-shape";
 import { PlacedPin } from "./placed-pin";
 import { ScaleBar } from "./scale-bar";
+import { SpotMark } from "./spot-mark";
 import { useView } from "./use-view";
-import { toScreen, viewShowing } from "./view";
-import type { ViewBox, ViewGeometry, ViewPin } from "./view-geometry";
+import { toScreen, viewAt, viewShowing } from "./view";
+import type { Spot, ViewBox, ViewGeometry, ViewPin, ViewSpot } from "./view-geometry";
 import { type ViewerMode, ViewerToolbar } from "./viewer-toolbar";
 
 interface DrawingViewerProps {
@@ -27,10 +29,12 @@ interface DrawingViewerProps {
   readonly hovered?: string | null;
   readonly onHover?: (part: string | null) => void;
   readonly selected?: string | null;
-  /** Without it parts are shown but cannot be chosen. */
-  readonly onSelect?: (part: string | null) => void;
+  /** Without it parts are shown but cannot be chosen; told the place of a press, in drawing millimetres. */
+  readonly onSelect?: (part: string | null, at?: Spot) => void;
   readonly pins?: readonly ViewPin[];
   readonly onPin?: (number: number) => void;
+  /** A place that somebody pointed at; another one is brought into view. */
+  readonly spot?: ViewSpot | null;
   readonly modes?: readonly ViewerMode[];
   readonly mode?: string;
   readonly onMode?: (mode: string) => void;
@@ -60,6 +64,7 @@ export function DrawingViewer({
   onSelect,
   pins = NO_PINS,
   onPin,
+  spot = null,
   modes = PARTS_ONLY,
   mode = modes[0]?.id ?? "",
   onMode,
@@ -78,6 +83,13 @@ export function DrawingViewer({
 
   const others = useMemo(() => boxesBeside(geometry, selected), [geometry, selected]);
 
+  const { change } = pane;
+  const windowSize = useRef(size);
+  windowSize.current = size;
+  useEffect(() => {
+    if (spot) change((now) => viewAt(now, spot.at, windowSize.current));
+  }, [spot, change]);
+
   const changeMeasuring = (on: boolean) => {
     setMeasuring(on);
     setPoints([]);
@@ -91,7 +103,7 @@ export function DrawingViewer({
       setPoints((set) => (set.length === 1 ? [...set, held] : [held]));
       return;
     }
-    onSelect?.(partOf(event.target));
+    onSelect?.(partOf(event.target), pane.drawingPlace(event));
   };
 
   const onKeyDown = (event: KeyboardEvent<SVGSVGElement>) => {
@@ -231,6 +243,7 @@ export function DrawingViewer({
         {pins.map((pin) => (
           <PlacedPin key={pin.number} pin={pin} view={view} onPin={onPin} />
         ))}
+        {spot && <SpotMark spot={spot} view={view} />}
         {measuring && <MeasureLine points={points} hover={pointer} view={view} unit={unit} />}
         <ScaleBar view={view} size={size} unit={unit} />
       </svg>

@@ -67,6 +67,12 @@ export interface ViewGeometry {
   readonly totals: { readonly parts: number; readonly kinds: number; readonly cutLength: number };
 }
 
+/** A place on the drawing that somebody pointed at. */
+export interface ViewSpot {
+  readonly at: Spot;
+  readonly label: string;
+}
+
 /** A finding's place on the drawing. */
 export interface ViewPin {
   readonly number: number;

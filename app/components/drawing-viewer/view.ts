@@ -17,6 +17,8 @@ const MARGIN = { above: 28, below: 76 };
 /** Room at its sides: for a dimension line on a desk, less on a phone. */
 const sideMargin = (width: number): number => (width >= 640 ? 56 : 16);
 /** From a twentieth of a pixel in a millimetre (a 20 m drawing on a phone) to 200 (a twentieth of a millimetre). */
+/** Millimetres across the window when a place is looked at. */
+const NEAR = 500;
 const SCALES = { least: 0.01, most: 200 };
 
 /** The whole of a box, centred, as large as it goes. */
@@ -56,6 +58,12 @@ export function viewShowing(view: View, box: ViewBox, size: Size): View {
   const [right, bottom] = toScreen(view, [box.maxX, box.minY]);
   if (left >= 0 && top >= 0 && right <= size.width && bottom <= size.height) return view;
   return movedView(view, size.width / 2 - (left + right) / 2, size.height / 2 - (top + bottom) / 2);
+}
+
+/** A place in the middle, near enough that about `NEAR` millimetres around it are seen; never farther than now. */
+export function viewAt(view: View, at: Spot, size: Size): View {
+  const scale = bounded(Math.max(view.scale, Math.min(size.width, size.height) / NEAR));
+  return { scale, x: size.width / 2 - at[0] * scale, y: size.height / 2 + at[1] * scale };
 }
 
 export const toScreen = (view: View, at: Spot): Spot => [

@@ -4,6 +4,7 @@ import type { DraftView } from "~/routes/builder/draft-view.server";
 import type { OrderView } from "~/routes/builder/order-view.server";
 import { Rail } from "../rail";
 import { Sheet } from "../sheet";
+import { Thread } from "../thread/thread";
 import { AddDrawings } from "./add-drawings";
 import { CancelOrder } from "./cancel-order";
 import { ChoicesPanel } from "./choices-panel";
@@ -109,26 +110,34 @@ export function DraftPage({ order, draft }: DraftPageProps) {
           </>
         }
         below={
-          <Sheet>
-            <div id="files" className="scroll-mt-4 divide-y divide-line">
-              <div className="flex flex-wrap items-center justify-between gap-3 px-4 py-3 sm:px-6">
-                <h2 className="text-lead font-semibold">Drawings</h2>
-                <UndoChoice after={draft.after} />
+          <>
+            <Sheet>
+              <div id="files" className="scroll-mt-4 divide-y divide-line">
+                <div className="flex flex-wrap items-center justify-between gap-3 px-4 py-3 sm:px-6">
+                  <h2 className="text-lead font-semibold">Drawings</h2>
+                  <UndoChoice after={draft.after} />
+                </div>
+                {files.map((file) => (
+                  <FileSheet
+                    key={file.drawingId}
+                    orderId={order.id}
+                    version={order.version}
+                    after={draft.after}
+                    file={file}
+                    stocks={draft.stocks}
+                    alone={files.length === 1}
+                  />
+                ))}
+                <AddDrawings orderId={order.id} upload={order.upload} />
               </div>
-              {files.map((file) => (
-                <FileSheet
-                  key={file.drawingId}
-                  orderId={order.id}
-                  version={order.version}
-                  after={draft.after}
-                  file={file}
-                  stocks={draft.stocks}
-                  alone={files.length === 1}
-                />
-              ))}
-              <AddDrawings orderId={order.id} upload={order.upload} />
-            </div>
-          </Sheet>
+            </Sheet>
+            <Thread
+              orderId={order.id}
+              audience="builder"
+              pointing={focus.pointing}
+              onOpenSpot={focus.openSpot}
+            />
+          </>
         }
       />
     </>

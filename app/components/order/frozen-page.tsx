@@ -2,6 +2,7 @@ import type { FrozenView } from "~/routes/builder/frozen-view.server";
 import type { OrderView } from "~/routes/builder/order-view.server";
 import { Rail, RailSection } from "../rail";
 import { Sheet } from "../sheet";
+import { Thread } from "../thread/thread";
 import { AskReview } from "./ask-review";
 import { CancelOrder } from "./cancel-order";
 import { Cautions } from "./cautions";
@@ -75,42 +76,50 @@ export function FrozenPage({ order, frozen }: FrozenPageProps) {
           </Rail>
         }
         below={
-          <div className="grid items-start gap-5 xl:grid-cols-2">
-            <Sheet padded>
-              <h2 className="mb-2 text-lead font-semibold">What happened</h2>
-              <OrderHistory moves={order.moves} />
-            </Sheet>
-            <Rail label="Terms of the order">
-              <RailSection title="Stock">
-                <ul className="space-y-1">
-                  {stocks.map((stock) => (
-                    <li key={stock.id}>
-                      {stockWords(stock)}
-                      {stocks.length > 1 && (
-                        <span className="measure text-soft"> · {stock.labels.join(" ")}</span>
-                      )}
-                    </li>
-                  ))}
-                </ul>
-              </RailSection>
-              <RailSection title="Where it goes">
-                <p>
-                  {order.delivery === "pick-up"
-                    ? `You pick it up: ${order.shop.address.join(", ")}`
-                    : order.shipTo && placeWords(order.shipTo)}
-                </p>
-              </RailSection>
-              <RailSection title="Take care">
-                <Cautions />
-              </RailSection>
-              {(frozen.mayCancel || frozen.mayAskReview) && (
-                <div className="flex flex-wrap items-center gap-x-6 gap-y-2 px-4 py-3 print:hidden">
-                  {frozen.mayAskReview && <AskReview order={order} />}
-                  {frozen.mayCancel && <CancelOrder order={order} paid={paid} />}
-                </div>
-              )}
-            </Rail>
-          </div>
+          <>
+            <Thread
+              orderId={order.id}
+              audience="builder"
+              pointing={focus.pointing}
+              onOpenSpot={focus.openSpot}
+            />
+            <div className="grid items-start gap-5 xl:grid-cols-2">
+              <Sheet padded>
+                <h2 className="mb-2 text-lead font-semibold">What happened</h2>
+                <OrderHistory moves={order.moves} />
+              </Sheet>
+              <Rail label="Terms of the order">
+                <RailSection title="Stock">
+                  <ul className="space-y-1">
+                    {stocks.map((stock) => (
+                      <li key={stock.id}>
+                        {stockWords(stock)}
+                        {stocks.length > 1 && (
+                          <span className="measure text-soft"> · {stock.labels.join(" ")}</span>
+                        )}
+                      </li>
+                    ))}
+                  </ul>
+                </RailSection>
+                <RailSection title="Where it goes">
+                  <p>
+                    {order.delivery === "pick-up"
+                      ? `You pick it up: ${order.shop.address.join(", ")}`
+                      : order.shipTo && placeWords(order.shipTo)}
+                  </p>
+                </RailSection>
+                <RailSection title="Take care">
+                  <Cautions />
+                </RailSection>
+                {(frozen.mayCancel || frozen.mayAskReview) && (
+                  <div className="flex flex-wrap items-center gap-x-6 gap-y-2 px-4 py-3 print:hidden">
+                    {frozen.mayAskReview && <AskReview order={order} />}
+                    {frozen.mayCancel && <CancelOrder order={order} paid={paid} />}
+                  </div>
+                )}
+              </Rail>
+            </div>
+          </>
         }
       />
     </>

@@ -11,6 +11,7 @@ export {
   type Sanding,
   sandingSchema,
 } from "./interpretation";
+export { MESSAGE_LIMITS } from "./message";
 export {
   checkMove,
   MOVE_NAMES,

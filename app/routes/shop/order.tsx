@@ -22,6 +22,7 @@ import { PiecesTable } from "~/components/shop/pieces-table";
 import { useShopZone } from "~/components/shop-zone";
 import { SteelRule } from "~/components/steel-rule";
 import { TextLink } from "~/components/text-link";
+import { Thread } from "~/components/thread/thread";
 import type { Route } from "./+types/order";
 import { actOnStaffOrder } from "./order-acts.server";
 import { type StaffOrderView, staffOrderView } from "./order-view.server";
@@ -71,6 +72,12 @@ export default function StaffOrder({ loaderData: order, actionData }: Route.Comp
               focus={focus}
             />
             <PiecesTable pieces={order.pieces} />
+            <Thread
+              orderId={order.id}
+              audience="staff"
+              pointing={focus.pointing}
+              onOpenSpot={focus.openSpot}
+            />
           </div>
         }
         rail={
