@@ -44,8 +44,19 @@ export default [
     ]),
   ]),
 
+  layout("routes/shipping/layout.tsx", [
+    ...prefix("shipping", [
+      index("routes/shipping/shipping-list.tsx"),
+      route(":orderId", "routes/shipping/shipping-order.tsx"),
+    ]),
+  ]),
+
   layout("routes/owner/layout.tsx", [
-    ...prefix("owner", [route("staff", "routes/owner/staff.tsx"), route("mail", "routes/owner/mail.tsx")]),
+    ...prefix("owner", [
+      route("refunds", "routes/owner/refunds.tsx"),
+      route("staff", "routes/owner/staff.tsx"),
+      route("mail", "routes/owner/mail.tsx"),
+    ]),
   ]),
 
   ...prefix("api", [

@@ -74,7 +74,7 @@ export interface QueuedOrder {
   readonly sheets: readonly SheetOfOrder[];
 }
 
-/** One page of the shop's orders: those to be received first, then by the day they are promised for. */
+/** One page of the shop's orders: those to be received first, then by the day they are promised for; shipped ones by the day they left. */
 export async function pageOfQueue(
   executor: Executor,
   search: QueueSearch,
@@ -110,7 +110,7 @@ export async function pageOfQueue(
 }
 
 const queueOrder = (search: QueueSearch): SQL[] =>
-  search.shippedSince
+  search.stages.every((stage) => stage === "shipped")
     ? [desc(orders.shippedAt)]
     : [
         sql`case ${orders.stage} when 'paid' then 0 else 1 end`,

@@ -5,6 +5,7 @@ import { ActForm } from "../act-form";
 import { Button } from "../button";
 import { Silhouette, type SilhouetteShape } from "../silhouette";
 import { SteelRule } from "../steel-rule";
+import { Unread } from "../thread/unread";
 import { ROW_MARK } from "./row-keys";
 import type { Waiting } from "./waiting-words";
 
@@ -24,6 +25,8 @@ export interface QueueItem {
   readonly waiting: Waiting;
   /** Share of the pieces that are a stage further. */
   readonly further: number;
+  /** Messages that its reader has not read. */
+  readonly unread: number;
   readonly shape: SilhouetteShape | null;
   /** The words of the day it is due on or was shipped. */
   readonly day: { readonly weekday: string; readonly number: string; readonly month: string } | null;
@@ -34,7 +37,7 @@ const STAGES = LINE.map((name) => ({ name }));
 
 function place({ stage, heldFrom, further }: QueueItem): number {
   const standing = stage === "on-hold" ? heldFrom : stage;
-  const at = LINE.findIndex((name) => name === standing);
+  const at = STAGES.findIndex(({ name }) => name === standing);
   return at < 0 ? 0 : at + (at < LINE.length - 1 ? Math.min(further, 0.95) : 0);
 }
 
@@ -74,6 +77,7 @@ export function QueueRow({ item, requestId }: QueueRowProps) {
         </Link>
         <p className="text-small text-soft">{facts.join(" · ")}</p>
         <p className="text-caption text-soft">{item.builder}</p>
+        <Unread count={item.unread} />
       </div>
       <p className="measure text-right text-small lg:order-last">
         {item.minutes === null ? "" : formatMinutes(item.minutes)}

@@ -14,7 +14,8 @@ export function useRowKeys({ searchId, onHelp }: { searchId: string; onHelp: () 
   useEffect(() => {
     const step = (by: 1 | -1) => {
       const rows = [...document.querySelectorAll<HTMLElement>("[data-row]")];
-      const at = rows.findIndex((row) => row === document.activeElement);
+      const { activeElement } = document;
+      const at = activeElement instanceof HTMLElement ? rows.indexOf(activeElement) : -1;
       const next = rows[at === -1 ? (by === 1 ? 0 : rows.length - 1) : at + by];
       next?.focus();
       next?.scrollIntoView({ block: "nearest" });

@@ -4,7 +4,7 @@ import { AreaError, AreaFrame } from "~/components/area-frame";
 import type { Route } from "./+types/layout";
 
 export async function loader(args: Route.LoaderArgs) {
-  return areaFacts(await requireAct(args, "shipping.edit"));
+  return areaFacts(await requireAct(args, "shipping.read"));
 }
 
 export default function ShippingLayout({ loaderData }: Route.ComponentProps) {

@@ -7,6 +7,7 @@ import { addDays, dayOf, instantAt, minutesOn, shownDay, weekdayOf } from "~/dom
 import { findLargestPart } from "~/flows/find-largest-part.server";
 import { listMachines } from "~/models/machines.server";
 import { listMaterials } from "~/models/materials.server";
+import { countUnread } from "~/models/messages.server";
 import { countByStage } from "~/models/order-list.server";
 import { countShippedSince, pageOfQueue, type QueuedOrder } from "~/models/queue.server";
 import { listRuns } from "~/models/runs.server";
@@ -37,8 +38,8 @@ export interface QueueQuery {
   readonly page: number;
 }
 
-/** The page of the queue that was asked for, with its counts and the machines' day. */
-export async function queueView(query: QueueQuery, now = new Date()) {
+/** The page of the queue that was asked for, with its counts, the machines' day, and what the reader has not read. */
+export async function queueView(query: QueueQuery, readerId: string, now = new Date()) {
   const { shop, review } = await currentSettings(db);
   const today = dayOf(now, shop.timeZone);
   /* A week of the shop begins on Monday. */
@@ -55,9 +56,13 @@ export async function queueView(query: QueueQuery, now = new Date()) {
   const counts = await countByStage(db, { kind: "staff" });
   const countOf = (stages: readonly Stage[]) =>
     stages.reduce((total, stage) => total + (counts.get(stage) ?? 0), 0);
-  const items = await Promise.all(
-    rows.map((row) => queueItem(row, { today, zone: shop.timeZone, cap: review.cap })),
-  );
+  const unread = await countUnread(db, {
+    userId: readerId,
+    reader: "staff",
+    orderIds: rows.map(({ order }) => order.id),
+  });
+  const facts = { today, zone: shop.timeZone, cap: review.cap, unread };
+  const items = await Promise.all(rows.map((row) => queueItem(row, facts)));
   return {
     today: shownDay(today),
     machines: await bookedToday(today),
@@ -93,6 +98,7 @@ interface Shop {
   readonly today: string;
   readonly zone: string;
   readonly cap: number;
+  readonly unread: ReadonlyMap<string, number>;
 }
 
 async function queueItem(row: QueuedOrder, shop: Shop): Promise<QueueItem> {
@@ -127,6 +133,7 @@ async function queueItem(row: QueuedOrder, shop: Shop): Promise<QueueItem> {
       dayWords: shownDay,
     }),
     further: furtherShare(row),
+    unread: shop.unread.get(order.id) ?? 0,
     shape: part ? silhouetteOf(part) : null,
     day: due ? dayWords(dayOf(due, shop.zone)) : null,
   };
