@@ -1,4 +1,7 @@
 import { db } from "~/db/client.server";
+import { mayDo } from "~/domain/orders";
+import { countAllUnread } from "~/models/messages.server";
+import { countTroubledMails } from "~/models/outbox.server";
 import { findSettings } from "~/models/settings.server";
 import { navFor, rolesInWords } from "./areas";
 import type { Person } from "./session.server";
@@ -11,7 +14,7 @@ export async function areaFacts(person: Person | null) {
   const zone = (await findSettings(db))?.content.shop.timeZone ?? ZONE;
   return {
     who: person && { name: person.name, role: rolesInWords(person.roles) },
-    nav: person ? navFor(person.roles) : [],
+    nav: person ? await navOf(person) : [],
     shownUnit: person?.shownUnit ?? "mm",
     zone,
     unverified: person !== null && !person.emailVerified,
@@ -19,3 +22,15 @@ export async function areaFacts(person: Person | null) {
 }
 
 export type AreaFacts = Awaited<ReturnType<typeof areaFacts>>;
+
+/** A person's ways, with how much waits there: unread messages, mails that did not arrive. */
+async function navOf(person: Person) {
+  const { id: userId, roles } = person;
+  const waiting: Record<string, number> = {};
+  if (mayDo(roles, "order.create"))
+    waiting["/orders"] = await countAllUnread(db, { userId, scope: { kind: "builder", userId } });
+  if (mayDo(roles, "queue.read"))
+    waiting["/shop"] = await countAllUnread(db, { userId, scope: { kind: "staff" } });
+  if (mayDo(roles, "mail.resend")) waiting["/owner/mail"] = await countTroubledMails(db);
+  return navFor(roles).map((way) => ({ ...way, waiting: waiting[way.to] ?? 0 }));
+}

@@ -81,7 +81,12 @@ function AreaLink({ item }: { readonly item: NavItem }) {
       }
     >
       {item.label}
-      {item.waiting ? <span className="text-small font-semibold text-amber">{item.waiting}</span> : null}
+      {item.waiting ? (
+        <span className="text-small font-semibold text-amber">
+          {item.waiting}
+          <span className="sr-only"> waiting</span>
+        </span>
+      ) : null}
     </NavLink>
   );
 }

@@ -17,11 +17,13 @@ import { Silhouette } from "~/components/silhouette";
 import { SteelRule } from "~/components/steel-rule";
 import { TabLinks } from "~/components/tab-links";
 import { TextField } from "~/components/text-field";
+import { Unread } from "~/components/thread/unread";
 import { db } from "~/db/client.server";
 import { MAIN_LINE, type Stage } from "~/domain/orders";
 import { findLargestPart } from "~/flows/find-largest-part.server";
 import { openAsks } from "~/flows/order-facts.server";
 import { listFindings } from "~/models/findings.server";
+import { countUnread } from "~/models/messages.server";
 import { countByStage, type ListedOrder, pageOfOrders } from "~/models/order-list.server";
 import { currentSettings } from "~/models/settings.server";
 import type { Route } from "./+types/orders";
@@ -52,6 +54,11 @@ export async function loader(args: Route.LoaderArgs) {
   const page = Math.min(wanted, pages);
   if (page !== wanted) found = await pageOfOrders(db, scope, { ...asked, page });
   const now = new Date();
+  const unread = await countUnread(db, {
+    userId: person.id,
+    reader: "builder",
+    orderIds: found.rows.map(({ id }) => id),
+  });
   const total = [...counts.values()].reduce((sum, count) => sum + count, 0);
   return {
     group,
@@ -64,11 +71,11 @@ export async function loader(args: Route.LoaderArgs) {
       count: GROUPS[name].stages.reduce((sum, stage) => sum + (counts.get(stage) ?? 0), 0),
     })),
     upload: total === 0 ? (await currentSettings(db)).upload : null,
-    orders: await Promise.all(found.rows.map((order) => listed(order, now))),
+    orders: await Promise.all(found.rows.map((order) => listed(order, now, unread.get(order.id) ?? 0))),
   };
 }
 
-async function listed(order: ListedOrder, now: Date) {
+async function listed(order: ListedOrder, now: Date, unread: number) {
   const part = await findLargestPart(order).catch(() => null);
   const { quote, promisedFor, shippedAt, paidAt } = order;
   return {
@@ -90,6 +97,7 @@ async function listed(order: ListedOrder, now: Date) {
     shippedAt: shippedAt?.toISOString() ?? null,
     updatedAt: order.updatedAt.toISOString(),
     now: now.toISOString(),
+    unread,
   };
 }
 type Row = Awaited<ReturnType<typeof listed>>;
@@ -194,6 +202,9 @@ function OrderRow({ order }: { readonly order: Row }) {
           className={`col-span-2 col-start-2 text-small lg:col-span-1 lg:col-start-4 ${waits.yours ? "text-amber" : "text-ink"}`}
         >
           {waits.words}
+          <span className="block">
+            <Unread count={order.unread} />
+          </span>
         </span>
         <span className="col-start-3 row-start-1 text-right lg:col-start-5">
           <span className="block">

@@ -45,7 +45,7 @@ export async function loader(args: Route.LoaderArgs) {
   return {
     query,
     mayReceive: mayDo(person.roles, "order.receive"),
-    queue: await queueView(query),
+    queue: await queueView(query, person.id),
   };
 }
 
