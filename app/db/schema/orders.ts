@@ -125,6 +125,9 @@ export const pieces = sqliteTable(
     /** Opaque, printed as the label's QR. */
     code: text().notNull().unique().$defaultFn(newId),
     parcelId: text(),
+    /** When the clerk counted it into the pile, and who. */
+    countedAt: instant(),
+    countedBy: text(),
     version: version(),
     createdAt: createdAt(),
     updatedAt: createdAt(),

@@ -41,3 +41,21 @@ export const labels = sqliteTable(
   },
   (table) => [index("labels_parcel").on(table.parcelId)],
 );
+
+/** A pick-up: who signed for the pile, and where the drawn signature is kept. */
+export const collections = sqliteTable(
+  "collections",
+  {
+    id: id(),
+    orderId: text()
+      .notNull()
+      .references(() => orders.id, { onDelete: "cascade" }),
+    /** As typed by who took it. */
+    name: text().notNull(),
+    /** In object storage: an SVG of the strokes. */
+    signatureKey: text().notNull(),
+    handedBy: text().notNull(),
+    createdAt: createdAt(),
+  },
+  (table) => [index("collections_order").on(table.orderId)],
+);
