@@ -93,7 +93,7 @@ test("two windows on one draft: the later one is told and nothing is lost; the l
 
 test("the page moves by itself when something happens to the order elsewhere", async () => {
   const here = await signedIn();
-  await toQuote(here, drawnFile("trial-box"), "12 mm mixed poplar").catch(() => undefined);
+  await toQuote(here, drawnFile("locker-doors"), "18 mm birch");
   const there = await here.context().newPage();
   await there.goto(here.url());
   await there.getByRole("button", { name: "Change the drawing" }).click();

@@ -37,6 +37,7 @@ export async function upload(page: Page, files: readonly DrawnFile[]): Promise<v
 /** Says that the size is right as declared and chooses the stock whose name begins so. */
 export async function answerQuestions(page: Page, stock: string): Promise<void> {
   const select = page.getByLabel("What is it cut from?");
+  await select.waitFor();
   const label = (await select.locator("option").allTextContents()).find((one) => one.startsWith(stock));
   if (label === undefined) throw new Error(`No stock begins with ${stock}.`);
   await select.selectOption(label);

@@ -1,4 +1,4 @@
-import { useEffect, useRef } from "react";
+import { useEffect, useRef, useState } from "react";
 import { type Interpretation, SANDING_LEVELS, type Sanding } from "~/domain/orders";
 import { Button } from "../button";
 import { CheckboxField } from "../checkbox-field";
@@ -19,7 +19,7 @@ const SANDING: Readonly<Record<Sanding, { label: string; hint: string }>> = {
 };
 
 interface ChoicesPanelProps {
-  readonly content: Interpretation;
+  readonly saved: Interpretation;
   readonly files: readonly DraftFile[];
   readonly after: number;
   /** Told at once what is chosen, for the price; saved a moment later. */
@@ -27,12 +27,15 @@ interface ChoicesPanelProps {
 }
 
 /** How many of everything, and what is done to it after the router. Every change is priced at once and saved. */
-export function ChoicesPanel({ content, files, after, onAhead }: ChoicesPanelProps) {
+export function ChoicesPanel({ saved, files, after, onAhead }: ChoicesPanelProps) {
   const act = useAct("choices");
   const form = useRef<HTMLFormElement>(null);
   const timer = useRef<ReturnType<typeof setTimeout>>(undefined);
   const dirty = useRef(false);
-  const { pending, submit } = act;
+  const sent = useRef(wordsOf(saved));
+  const [round, setRound] = useState(0);
+  const { pending, submit, refusal } = act;
+  const savedWords = wordsOf(saved);
 
   useEffect(() => () => clearTimeout(timer.current), []);
 
@@ -41,6 +44,7 @@ export function ChoicesPanel({ content, files, after, onAhead }: ChoicesPanelPro
     timer.current = setTimeout(() => {
       if (!form.current?.checkValidity()) return;
       dirty.current = false;
+      sent.current = wordsOf(chosenIn(new FormData(form.current), saved));
       void submit(form.current, { method: "post" });
     }, REST_MS);
   };
@@ -50,19 +54,36 @@ export function ChoicesPanel({ content, files, after, onAhead }: ChoicesPanelPro
   useEffect(() => {
     if (!pending && dirty.current) latest.current();
   }, [pending]);
+  /* What was changed elsewhere, by undo or in another window, is shown; what was refused here stays to be seen. */
+  useEffect(() => {
+    if (dirty.current || refusal || savedWords === sent.current) return;
+    sent.current = savedWords;
+    setRound((last) => last + 1);
+  }, [savedWords, refusal]);
 
   const change = () => {
     if (!form.current?.checkValidity()) return;
-    onAhead(chosenIn(new FormData(form.current), content));
+    onAhead(chosenIn(new FormData(form.current), saved));
     dirty.current = true;
     if (!pending) save();
   };
 
   return (
     <act.Form ref={form} method="post" onChange={change} className="space-y-4 text-small">
-      <RefusalNotice refusal={act.refusal} />
+      <RefusalNotice refusal={refusal} />
       <input type="hidden" name="intent" value="choices" />
       <input type="hidden" name="after" value={after} />
+      <Fields key={round} saved={saved} files={files} />
+      <noscript>
+        <Button size="small">Save the choices</Button>
+      </noscript>
+    </act.Form>
+  );
+}
+
+function Fields({ saved, files }: Pick<ChoicesPanelProps, "saved" | "files">) {
+  return (
+    <>
       {files.map((file, index) => (
         <div key={file.sha256}>
           <input type="hidden" name={`sets[${index}].sha256`} value={file.sha256} />
@@ -79,21 +100,22 @@ export function ChoicesPanel({ content, files, after, onAhead }: ChoicesPanelPro
         </div>
       ))}
       <RadioField
-        field={plainField("sanding", { id: "sanding", value: content.sanding })}
+        field={plainField("sanding", { id: "sanding", value: saved.sanding })}
         label="Edges"
         choices={SANDING_LEVELS.map((level) => ({ value: level, ...SANDING[level] }))}
       />
       <CheckboxField
-        field={plainField("leaveTabs", { id: "leave-tabs", value: content.leaveTabs ? "on" : "" })}
+        field={plainField("leaveTabs", { id: "leave-tabs", value: saved.leaveTabs ? "on" : "" })}
         label="Leave the tabs on"
         hint="you cut the parts out of their last wood bridges yourself; it saves the bench time"
       />
-      <noscript>
-        <Button size="small">Save the choices</Button>
-      </noscript>
-    </act.Form>
+    </>
   );
 }
+
+/** What this form can say of an interpretation, to tell whether two agree. */
+const wordsOf = ({ sanding, leaveTabs, files }: Interpretation): string =>
+  JSON.stringify([sanding, leaveTabs, files.map(({ sha256, sets }) => [sha256, sets])]);
 
 /** The choices as the form has them now. */
 function chosenIn(form: FormData, content: Interpretation): Interpretation {

@@ -65,7 +65,7 @@ export function DraftPage({ order, draft }: DraftPageProps) {
             <Rail label="The order">
               <div id="questions" className="scroll-mt-4 empty:hidden">
                 <FirstQuestions
-                  key={draft.after}
+                  key={`${draft.unitQuestion?.shas.join(" ")}`}
                   question={draft.unitQuestion}
                   files={files}
                   stocks={draft.stocks}
@@ -94,13 +94,14 @@ export function DraftPage({ order, draft }: DraftPageProps) {
                   files={files}
                   findings={draft.findings}
                   delivered={draft.delivery !== null}
+                  saving={JSON.stringify(content) !== JSON.stringify(draft.content)}
                 />
               </PricePanel>
             </Rail>
             <Sheet padded>
               <h2 className="mb-3 text-lead font-semibold">Choices</h2>
               <ChoicesPanel
-                content={content}
+                saved={draft.content}
                 files={files}
                 after={draft.after}
                 onAhead={(next) => setAhead({ after: draft.after, content: next })}

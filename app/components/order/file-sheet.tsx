@@ -97,7 +97,7 @@ function layerWords({ layers }: DraftFile): string {
 function FileChoice({ file, after, stocks }: Pick<FileSheetProps, "file" | "after" | "stocks">) {
   const { Form, pending, refusal } = useAct("file", file.sha256);
   return (
-    <Form key={after} method="post" className="space-y-2 print:hidden">
+    <Form key={`${file.materialId} ${file.unit}`} method="post" className="space-y-2 print:hidden">
       <RefusalNotice refusal={refusal} />
       <input type="hidden" name="intent" value="file" />
       <input type="hidden" name="after" value={after} />

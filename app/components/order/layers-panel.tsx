@@ -44,7 +44,12 @@ export function LayersPanel({ file, after }: LayersPanelProps) {
   });
   const errorsOf = (index: number) => form.allErrors[`layers[${index}].value`];
   return (
-    <act.Form key={`${after} ${unit}`} method="post" {...getFormProps(form)} className="space-y-3">
+    <act.Form
+      key={`${unit} ${JSON.stringify(file.layers)}`}
+      method="post"
+      {...getFormProps(form)}
+      className="space-y-3"
+    >
       <FormErrors
         errors={form.errors}
         fields={file.layers.map(({ name }, index) => ({

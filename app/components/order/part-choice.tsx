@@ -18,7 +18,7 @@ export function PartChoice({ part, after }: { readonly part: ShownPart; readonly
   const { Form, pending, refusal } = useAct("part");
   return (
     <Form
-      key={`${part.label} ${after}`}
+      key={`${part.label} ${part.name} ${part.grain}`}
       method="post"
       className="mt-3 space-y-3 border-t border-line pt-3 print:hidden"
     >

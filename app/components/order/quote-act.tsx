@@ -14,10 +14,12 @@ interface QuoteActProps {
   readonly files: readonly DraftFile[];
   readonly findings: readonly ShownFinding[];
   readonly delivered: boolean;
+  /** Choices are still on their way to be saved: a quote now would be of the ones before. */
+  readonly saving: boolean;
 }
 
 /** The one act of a draft, with what still stands before it. */
-export function QuoteAct({ version, requestId, files, findings, delivered }: QuoteActProps) {
+export function QuoteAct({ version, requestId, files, findings, delivered, saving }: QuoteActProps) {
   const { Form, pending, refusal } = useAct("quote");
   const stops = findings.filter(({ severity }) => severity === "stop");
   const asks = findings.filter(mustBeSettled).length - stops.length;
@@ -41,7 +43,7 @@ export function QuoteAct({ version, requestId, files, findings, delivered }: Quo
         variant="primary"
         size="large"
         wide
-        pending={pending}
+        pending={pending || saving}
         disabled={open.length > 0 || stops.length > 0}
         aria-describedby="quote-words"
       >
