@@ -5,6 +5,7 @@ import type { Finding, FitInput, FitRule, Severity } from "./finding";
 import { DEFAULT_LIMITS } from "./limits";
 import { openOutline } from "./open-outline";
 import { openingNarrowerThanTool } from "./opening-narrower-than-tool";
+import { partHeldByTabs } from "./part-held-by-tabs";
 import { partLargerThanSheet } from "./part-larger-than-sheet";
 import { partTooSmallToHold } from "./part-too-small-to-hold";
 import { pocketDeeperThanStock } from "./pocket-deeper-than-stock";
@@ -24,6 +25,7 @@ export const FIT_RULES: Readonly<Record<string, FitRule>> = {
   "thin-floor": thinFloor,
   "pocket-depth-unknown": pocketDepthUnknown,
   "part-too-small-to-hold": partTooSmallToHold,
+  "part-held-by-tabs": partHeldByTabs,
   "bridged-gap": bridgedGap,
   "doubled-lines": doubledLines,
 };

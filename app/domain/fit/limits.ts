@@ -10,6 +10,9 @@ export interface FitLimits {
   readonly smallestPartArea: number;
   /** Parts narrower are hard to hold. */
   readonly narrowestPart: number;
+  /** Parts that enclose less, or are narrower, are held by tabs: vacuum alone lets go of them. */
+  readonly tabbedPartArea: number;
+  readonly tabbedPartWidth: number;
   /** An opening should be wider than the tool by this much. */
   readonly toolClearance: number;
   /** A part shorter than this, or longer than the next, makes the unit doubtful. */
@@ -25,13 +28,15 @@ export interface FitLimits {
 
 /**
  * Defaults of common practice, no source but the rule set for the upload check: part area 9 in² and width
- * 1.5 in, clearance 0.01 in, sizes 0.5 in to 20 ft, floors 0.25 in and 0.10 in; hinge cups 3 mm and 1.5 mm.
+ * 1.5 in, tabs under 36 in² or 100 mm (vacuum with kerfs open is weaker than sealed), clearance 0.01 in, sizes 0.5 in to 20 ft, floors 0.25 in and 0.10 in; hinge cups 3 mm and 1.5 mm.
  */
 export const DEFAULT_LIMITS: FitLimits = {
   nearlyClosedGap: 2,
   mostOpenListed: 20,
   smallestPartArea: 9 * INCH_IN_MM ** 2,
   narrowestPart: 1.5 * INCH_IN_MM,
+  tabbedPartArea: 36 * INCH_IN_MM ** 2,
+  tabbedPartWidth: 100,
   toolClearance: 0.01 * INCH_IN_MM,
   shortestPlausible: 0.5 * INCH_IN_MM,
   longestPlausible: 20 * 12 * INCH_IN_MM,

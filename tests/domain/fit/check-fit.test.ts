@@ -55,8 +55,8 @@ describe("open outlines", () => {
   });
 
   it("a bridged gap is a note, a wider one asked", () => {
-    expect(summary([panel, ...openBy(0.15)])).toEqual(["note bridged-gap"]);
-    expect(summary([panel, ...openBy(0.4)])).toEqual(["ask bridged-gap"]);
+    expect(summary([panel, ...openBy(0.15)])).toEqual(["note part-held-by-tabs", "note bridged-gap"]);
+    expect(summary([panel, ...openBy(0.4)])).toEqual(["ask bridged-gap", "note part-held-by-tabs"]);
   });
 
   it("loose lines are asked, many at once", () => {
@@ -80,8 +80,11 @@ describe("size", () => {
     expect(summary([drawn(rectangle(0, 0, 1200, 2420))])).toEqual([]);
     expect(summary([drawn(rectangle(0, 0, 2421, 1200))])).toEqual(["stop part-larger-than-sheet"]);
     // A strip longer than the sheet lies askew: 2500 long, 40 wide on 2420 × 1200 (diagonal 2701).
-    expect(summary([drawn(rectangle(0, 0, 2500, 40))])).toEqual([]);
-    expect(summary([drawn(rectangle(0, 0, 2700, 40))])).toEqual(["stop part-larger-than-sheet"]);
+    expect(summary([drawn(rectangle(0, 0, 2500, 40))])).toEqual(["note part-held-by-tabs"]);
+    expect(summary([drawn(rectangle(0, 0, 2700, 40))])).toEqual([
+      "stop part-larger-than-sheet",
+      "note part-held-by-tabs",
+    ]);
   });
 
   it("a part is asked that is hard to hold", () => {
@@ -89,7 +92,18 @@ describe("size", () => {
       { code: "part-too-small-to-hold", severity: "ask", measured: 38, limit: DEFAULT_LIMITS.narrowestPart },
     ]);
     expect(summary([drawn(rectangle(0, 0, 75, 75))])).toEqual(["ask part-too-small-to-hold"]);
-    expect(summary([drawn(rectangle(0, 0, 80, 80))])).toEqual([]);
+    expect(summary([drawn(rectangle(0, 0, 80, 80))])).toEqual(["note part-held-by-tabs"]);
+  });
+
+  it("a part that vacuum alone does not hold is noted", () => {
+    // 36 in² and 100 mm: common practice, no source.
+    expect(check([drawn(rectangle(0, 0, 180, 110))])).toMatchObject([
+      { code: "part-held-by-tabs", severity: "note", measured: 19_800, limit: 36 * 25.4 ** 2 },
+    ]);
+    expect(check([drawn(rectangle(0, 0, 400, 99))])).toMatchObject([
+      { code: "part-held-by-tabs", measured: 99, limit: 100 },
+    ]);
+    expect(summary([drawn(rectangle(0, 0, 240, 100))])).toEqual([]);
   });
 
   it("parts under half an inch or over twenty feet make the unit doubtful", () => {
@@ -188,14 +202,16 @@ describe("a rectangle that only might be a frame", () => {
       drawn(rectangle(20, 20, 800, 600)),
       drawn(rectangle(100, 100, 90, 90)),
     ];
-    expect(summary(inside)).toEqual(["ask possible-frame"]);
+    expect(summary(inside)).toEqual(["ask possible-frame", "note part-held-by-tabs"]);
   });
 });
 
 describe("thresholds and units", () => {
   it("are settings", () => {
     expect(
-      summary([drawn(rectangle(0, 0, 300, 38))], { limits: { narrowestPart: 30, smallestPartArea: 0 } }),
+      summary([drawn(rectangle(0, 0, 300, 38))], {
+        limits: { narrowestPart: 30, smallestPartArea: 0, tabbedPartArea: 0, tabbedPartWidth: 30 },
+      }),
     ).toEqual([]);
   });
 
