@@ -143,8 +143,7 @@ export async function findMail(executor: Executor, id: string): Promise<Outgoing
   return mail;
 }
 
-export const MAIL_STATUSES = ["pending", "sent", "failed", "bounced"] as const;
-export type MailStatus = (typeof MAIL_STATUSES)[number];
+export type MailStatus = OutgoingMail["status"];
 
 export interface MailFilter {
   readonly status?: MailStatus | undefined;

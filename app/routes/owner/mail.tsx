@@ -1,4 +1,3 @@
-import { randomUUID } from "node:crypto";
 import { data, Form, redirect } from "react-router";
 import { z } from "zod";
 import { requireAct } from "~/auth/guards.server";
@@ -18,13 +17,14 @@ import { db } from "~/db/client.server";
 import { isSecretMail } from "~/documents/mails/kinds";
 import { resendMail } from "~/flows/resend-mail.server";
 import { REFUSAL_STATUS } from "~/flows/verdict";
-import { countMails, findMail, listMailKinds, listMails, MAIL_STATUSES } from "~/models/outbox.server";
+import { countMails, findMail, listMailKinds, listMails } from "~/models/outbox.server";
 import type { Route } from "./+types/mail";
 
 const PAGE_SIZE = 25;
+const STATUSES = ["pending", "sent", "failed", "bounced"] as const;
 
 const filterSchema = z.object({
-  status: z.enum(MAIL_STATUSES).optional().catch(undefined),
+  status: z.enum(STATUSES).optional().catch(undefined),
   kind: z.string().max(40).optional().catch(undefined),
   q: z.string().trim().max(100).optional().catch(undefined),
   page: z.coerce.number().int().min(1).max(100_000).catch(1),
@@ -49,7 +49,7 @@ export async function loader(args: Route.LoaderArgs) {
     kinds: await listMailKinds(db),
     pages: Math.ceil(total / PAGE_SIZE),
     total,
-    requestId: randomUUID(),
+    requestId: crypto.randomUUID(),
     mails: mails.map(
       ({
         id,
@@ -127,7 +127,7 @@ export default function Mail({ loaderData, actionData }: Route.ComponentProps) {
         label="Status"
         tabs={[
           { to: hrefOf(filter, { status: undefined, page: 1 }), label: "all", active: !filter.status },
-          ...MAIL_STATUSES.map((status) => ({
+          ...STATUSES.map((status) => ({
             to: hrefOf(filter, { status, page: 1 }),
             label: status,
             count: counts[status],
