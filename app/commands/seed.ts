@@ -6,7 +6,7 @@ import { closeDatabase, db, transact } from "~/db/client.server";
 import { migrateDatabase } from "~/db/migrate.server";
 import { insertShop } from "~/db/seed/insert-shop.server";
 import { shiftOrderTimes } from "~/db/seed/shift-times.server";
-import { addDays, dayOf, workingDayFrom } from "~/domain/scheduling";
+import { addDays, dayOf, instantAt, workingDayFrom } from "~/domain/scheduling";
 import { closePool } from "~/jobs/pool.server";
 import { findOrder } from "~/models/orders.server";
 import { currentSettings, findSettings } from "~/models/settings.server";
@@ -14,6 +14,7 @@ import { afterwards } from "./seed/aftermath";
 import { carryOrder } from "./seed/carry";
 import { demoOrders } from "./seed/orders";
 import { seedPeople } from "./seed/people";
+import { talk } from "./seed/talk";
 
 async function seed(): Promise<string> {
   await migrateDatabase();
@@ -24,12 +25,21 @@ async function seed(): Promise<string> {
   const { shop, lead } = await currentSettings(db);
   const today = dayOf(now, shop.timeZone);
   const plan = demoOrders(people);
-  for (const { daysAgo, aftermath, ...demo } of plan) {
+  for (const { daysAgo, dueIn, aftermath, talk: messages, ...demo } of plan) {
     const day = workingDayFrom(addDays(today, demo.to === "scheduled" ? 1 : 0), lead.holidays);
     const { id } = await carryOrder(demo, { operator: people.operator, clerk: people.clerk, day });
     const order = await findOrder(db, id, { kind: "staff" });
     if (aftermath && order) await afterwards(order, aftermath, people);
-    await transact((tx) => shiftOrderTimes(tx, id, daysAgo));
+    const due = dueIn === undefined ? null : workingDayFrom(addDays(today, dueIn), lead.holidays);
+    await transact((tx) =>
+      shiftOrderTimes(tx, {
+        orderId: id,
+        days: daysAgo,
+        promisedFor: due === null ? null : instantAt(due, "12:00", shop.timeZone),
+        now,
+      }),
+    );
+    if (messages) await talk(id, demo.builder, people, messages, now);
   }
   return `Made ${Object.keys(people).length} people and ${plan.length} orders.\n`;
 }

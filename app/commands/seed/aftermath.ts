@@ -4,6 +4,7 @@ import { cancelOrder } from "~/flows/cancel-order.server";
 import { holdOrder } from "~/flows/hold-order.server";
 import { refundOrder } from "~/flows/refund-order.server";
 import { remakePiece } from "~/flows/remake-piece.server";
+import { undoMove } from "~/flows/undo-move.server";
 import type { Verdict } from "~/flows/verdict";
 import { listPaidCheckouts } from "~/models/checkouts.server";
 import type { Order } from "~/models/orders.server";
@@ -38,6 +39,20 @@ async function act(
       });
     case "cancel":
       return cancelOrder({ actor: trailer, orderId, version, reason: "The window is kept as it is." });
+    case "cancel-late":
+      return cancelOrder({
+        actor: owner,
+        orderId,
+        version,
+        reason: "The kettle was never delivered; its sheet goes back to the rack.",
+      });
+    case "undo":
+      return undoMove({
+        actor: operator,
+        orderId,
+        version,
+        reason: "Counted on the table: one sheet is still on the router.",
+      });
     case "remake": {
       const piece = (await listPieces(db, orderId)).find(({ state }) => state === "good");
       if (!piece) throw new Error("There is no piece to make again.");
