@@ -63,7 +63,7 @@ export function DraftPage({ order, draft }: DraftPageProps) {
         rail={
           <>
             <Rail label="The order">
-              <div id="questions" className="scroll-mt-4 empty:hidden">
+              <div id="questions" className="scroll-mt-4 empty:hidden print:hidden">
                 <FirstQuestions
                   key={`${draft.unitQuestion?.shas.join(" ")}`}
                   question={draft.unitQuestion}

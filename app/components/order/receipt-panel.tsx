@@ -30,6 +30,11 @@ export function ReceiptPanel({ quote, money }: ReceiptPanelProps) {
           </li>
         ))}
       </ul>
+      {quote.approvedAt && (
+        <p className="py-1 text-soft">
+          You approved the part list and its sizes on <DateTime at={quote.approvedAt} show="full" />.
+        </p>
+      )}
       <button
         type="button"
         onClick={() => window.print()}

@@ -2,20 +2,22 @@ import { z } from "zod";
 
 /** Lines of at least 64 characters each, as USPS Publication 28 asks; the secondary unit stands at the end of a delivery line. */
 const line = (most: number) => z.string().trim().max(most);
+/** A line that must be there: an empty one and a missing one are told the same. */
+const needed = (words: string) => z.string({ error: words }).trim().min(1, words).max(64);
 
 export const shipToSchema = z.object({
-  recipient: line(64).min(1, "Who receives it?"),
+  recipient: needed("Who receives it?"),
   company: line(64).optional(),
-  line1: line(64).min(1, "Street and number"),
+  line1: needed("Street and number"),
   line2: line(64).optional(),
-  city: line(64).min(1, "City"),
+  city: needed("City"),
   region: z
-    .string()
+    .string({ error: "Two letters, like OR" })
     .trim()
     .toUpperCase()
     .regex(/^[A-Z]{2}$/, "Two letters, like OR"),
   postcode: z
-    .string()
+    .string({ error: "Five digits, or nine with a hyphen" })
     .trim()
     .regex(/^\d{5}(-\d{4})?$/, "Five digits, or nine with a hyphen"),
   country: z.literal("US").default("US"),
