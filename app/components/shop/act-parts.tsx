@@ -61,7 +61,7 @@ export function ReasonedAct({ order, intent, state, label, question, confirm, as
   if (!state) return null;
   if (!state.may) return <NotNow label={label} why={state.why} />;
   return (
-    <ActForm intent={intent} fields={movedBy(order)}>
+    <ActForm key={order.version} intent={intent} fields={movedBy(order)}>
       {(pending) => (
         <ConfirmButton label={label} question={question} confirm={confirm} variant="plain" pending={pending}>
           <TextField

@@ -17,7 +17,7 @@ export function ExceptionActs({ order }: { readonly order: StaffOrderView }) {
   return (
     <RailSection title="Exceptions">
       <div className="space-y-3">
-        {acts.remake?.may && <MarkPiece order={order} />}
+        {acts.remake?.may && <MarkPiece key={order.version} order={order} />}
         <ReasonedAct
           order={order}
           intent="hold"

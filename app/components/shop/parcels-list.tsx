@@ -1,5 +1,5 @@
 import { formatKilograms } from "~/domain/units";
-import { Measure } from "../measure";
+import { Measure, Size } from "../measure";
 
 export interface ShownParcel {
   readonly number: number;
@@ -26,9 +26,8 @@ export function ParcelsList({ parcels }: { readonly parcels: readonly ShownParce
               Parcel {parcel.number} of {parcels.length}
             </p>
             <p>
-              <Measure length={parcel.length} digits={0} bare /> ×{" "}
-              <Measure length={parcel.width} digits={0} bare /> ×{" "}
-              <Measure length={parcel.height} digits={0} />
+              <Size width={parcel.length} height={parcel.width} bare /> ×{" "}
+              <Measure length={parcel.height} digits={1} />
             </p>
             <p className="measure">{formatKilograms(parcel.kilograms)}</p>
             <p className="measure break-words text-soft">{parcel.content}</p>
