@@ -25,8 +25,11 @@ async function seed(): Promise<string> {
   const { shop, lead } = await currentSettings(db);
   const today = dayOf(now, shop.timeZone);
   const plan = demoOrders(people);
+  let waiting = 0;
   for (const { daysAgo, dueIn, aftermath, talk: messages, ...demo } of plan) {
-    const day = workingDayFrom(addDays(today, demo.to === "scheduled" ? 1 : 0), lead.holidays);
+    const ahead =
+      demo.to === "scheduled" ? plan.filter(({ to }) => to === "scheduled").length - waiting++ : 0;
+    const day = workingDayFrom(addDays(today, ahead % 3), lead.holidays);
     const { id } = await carryOrder(demo, { operator: people.operator, clerk: people.clerk, day });
     const order = await findOrder(db, id, { kind: "staff" });
     if (aftermath && order) await afterwards(order, aftermath, people);

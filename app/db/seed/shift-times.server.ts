@@ -1,4 +1,4 @@
-import { asc, eq, inArray, type SQL, sql } from "drizzle-orm";
+import { and, asc, eq, inArray, isNotNull, type SQL, sql } from "drizzle-orm";
 import type { SQLiteColumn } from "drizzle-orm/sqlite-core";
 import type { Executor } from "../client.server";
 import {
@@ -108,5 +108,5 @@ async function shiftRuns(tx: Executor, orderId: string, cutAt: Date | null): Pro
       startedAt: sql`${cutAt.getTime()} - cast(${runs.actualMinutes} * 60000 as integer)`,
       day: cutAt.toISOString().slice(0, 10),
     })
-    .where(inArray(runs.sheetId, sheets));
+    .where(and(inArray(runs.sheetId, sheets), isNotNull(runs.finishedAt)));
 }
