@@ -3,11 +3,12 @@ import { cancelledMail } from "~/documents/mails/cancelled";
 import { holdMail } from "~/documents/mails/hold";
 import type { Mail, OrderMailFacts } from "~/documents/mails/order-mail";
 import { quoteMail } from "~/documents/mails/quote-ready";
+import { readyToCollectMail } from "~/documents/mails/ready-to-collect";
 import { receiptMail } from "~/documents/mails/receipt";
 import { refundMail } from "~/documents/mails/refund";
 import { sentBackMail } from "~/documents/mails/sent-back";
 import { type ShortageFacts, shortageMail } from "~/documents/mails/shortage";
-import { stageMail } from "~/documents/mails/stage";
+import { type ShippedParcel, stageMail } from "~/documents/mails/stage";
 import type { Stage } from "~/domain/orders";
 import type { Order } from "~/models/orders.server";
 import { findAddressee } from "~/models/people.server";
@@ -126,7 +127,10 @@ export const mailCancelled = (
   mailBuilder(tx, order, "cancelled", (facts) => cancelledMail({ ...facts, reason, wasPaid }));
 
 /** Tells of the stage the order has reached, when it came from another. */
-export async function mailStage(tx: Executor, { order, from }: { order: Order; from: Stage }): Promise<void> {
+export async function mailStage(
+  tx: Executor,
+  { order, from, parcels }: { order: Order; from: Stage; parcels?: readonly ShippedParcel[] },
+): Promise<void> {
   if (order.stage === from) return;
   await mailBuilder(tx, order, "stage", (facts) =>
     stageMail({
@@ -134,7 +138,27 @@ export async function mailStage(tx: Executor, { order, from }: { order: Order; f
       stage: order.stage,
       promisedFor: order.promisedFor,
       delivery: order.delivery,
+      parcels: parcels ?? [],
     }),
+  );
+}
+
+/** Tells that the counted pile waits at the shop. */
+export async function mailReadyToCollect(
+  tx: Executor,
+  {
+    order,
+    requestId,
+    ...pile
+  }: { order: Order; requestId: string; pieces: number; kilograms: number; heaviest: number },
+): Promise<void> {
+  const { shop } = await currentSettings(tx);
+  await mailBuilder(
+    tx,
+    order,
+    "ready",
+    (facts) => readyToCollectMail({ ...facts, ...pile, address: shop.address, phone: shop.phone }),
+    `ready:${order.id}:${requestId}`,
   );
 }
 

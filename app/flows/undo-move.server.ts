@@ -3,7 +3,7 @@ import { type PieceStage, SHOP_STAGES, stageFromPieces } from "~/domain/orders";
 import { listNestsOfOrder, listRunsOfPieces } from "~/models/nests.server";
 import type { Order } from "~/models/orders.server";
 import { markHandedOver } from "~/models/parcels.server";
-import { listPieces, movePieces, removePieces, setParcel } from "~/models/pieces.server";
+import { listPieces, movePieces, removePieces, setCounted, setParcel } from "~/models/pieces.server";
 import { clearRuns } from "~/models/runs.server";
 import { listMovesBackwards, type StageMove } from "~/models/stage-moves.server";
 import { listStockGroups, reserveGroup } from "~/models/stock-groups.server";
@@ -26,7 +26,11 @@ const OTHERWISE: Readonly<Record<string, string>> = {
  * undone stays in the history.
  */
 export async function undoMove(
-  options: MoveOptions & { readonly reason: string },
+  options: MoveOptions & {
+    readonly reason: string;
+    /** Only if this is the last act; anything done since is left as it is. */
+    readonly only?: string | undefined;
+  },
 ): Promise<Verdict<Moved & { undone: string }>> {
   return answering(() =>
     transact(async (tx) => {
@@ -38,6 +42,8 @@ export async function undoMove(
         throw new Refused(
           refuse("wrong-stage", (last && OTHERWISE[last.act]) ?? "There is no step to take back."),
         );
+      if (options.only !== undefined && last.id !== options.only)
+        throw new Refused(refuse("wrong-stage", "Something else was done on this order since."));
       const ids = last.pieceIds ?? [];
       const back =
         last.act === "receive" ? null : { ids, from: pieceStage(last.to), to: pieceStage(last.from) };
@@ -81,8 +87,9 @@ function pieceStage(stage: string): PieceStage {
 async function takeBack(tx: Executor, order: Order, last: StageMove): Promise<void> {
   const ids = last.pieceIds ?? [];
   if (last.act === "receive") await removePieces(tx, order.id);
-  if (last.act === "ship") {
-    await markHandedOver(tx, order.id, null);
+  if (last.act === "ship") await markHandedOver(tx, order.id, null);
+  if (last.act === "remove-tabs") {
+    await setCounted(tx, { orderId: order.id, ids, at: null, by: null });
     await setParcel(tx, ids, null);
   }
   if (last.act !== "cut") return;

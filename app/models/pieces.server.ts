@@ -104,3 +104,38 @@ export async function setParcel(
     .set({ parcelId, updatedAt: new Date() })
     .where(inArray(pieces.id, [...pieceIds]));
 }
+
+/** Puts every piece of an order out of its parcel. */
+export async function clearParcels(tx: Executor, orderId: string): Promise<void> {
+  await tx.update(pieces).set({ parcelId: null, updatedAt: new Date() }).where(eq(pieces.orderId, orderId));
+}
+
+/** Marks pieces of an order counted, or not counted after all. */
+export async function setCounted(
+  tx: Executor,
+  count: { orderId: string; ids: readonly string[]; at: Date | null; by: string | null },
+): Promise<void> {
+  if (count.ids.length === 0) return;
+  await tx
+    .update(pieces)
+    .set({ countedAt: count.at, countedBy: count.by, updatedAt: new Date() })
+    .where(and(eq(pieces.orderId, count.orderId), inArray(pieces.id, [...count.ids])));
+}
+
+/** The piece whose label carries this code; any order's, for the shop's people. */
+export async function findPieceByCode(executor: Executor, code: string): Promise<Piece | undefined> {
+  const [row] = await executor.select().from(pieces).where(eq(pieces.code, code));
+  return row;
+}
+
+/** Pieces by their ids, of whichever orders, with their parts. */
+export async function listPiecesById(executor: Executor, ids: readonly string[]): Promise<PieceWithPart[]> {
+  if (ids.length === 0) return [];
+  const rows = await executor
+    .select({ piece: pieces, part: parts })
+    .from(pieces)
+    .innerJoin(parts, eq(pieces.partId, parts.id))
+    .where(inArray(pieces.id, [...ids]))
+    .orderBy(pieces.orderId, parts.position, pieces.number);
+  return rows.map(({ piece, part }) => ({ ...piece, part }));
+}

@@ -44,3 +44,8 @@ export async function listMovesBackwards(executor: Executor, orderId: string): P
     .where(eq(stageMoves.orderId, orderId))
     .orderBy(desc(stageMoves.createdAt), sql`rowid desc`);
 }
+
+/** What one request moved, on however many orders. */
+export async function listMovesByRequest(executor: Executor, requestId: string): Promise<StageMove[]> {
+  return executor.select().from(stageMoves).where(eq(stageMoves.requestId, requestId)).orderBy(sql`rowid`);
+}

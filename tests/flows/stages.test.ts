@@ -3,13 +3,13 @@ import { db, transact } from "~/db/client.server";
 import { ledgerEntries, lots, nests, newId, outbox, pieces } from "~/db/schema";
 import { cancelOrder } from "~/flows/cancel-order.server";
 import { dropNest } from "~/flows/drop-nest.server";
+import { handOver } from "~/flows/hand-over.server";
 import { holdOrder } from "~/flows/hold-order.server";
 import { movePieces } from "~/flows/move-pieces.server";
 import { receiveOrder } from "~/flows/receive-order.server";
 import { releaseOrder } from "~/flows/release-order.server";
 import { remakePiece } from "~/flows/remake-piece.server";
 import { reviseOrder } from "~/flows/revise-order.server";
-import { shipOrder } from "~/flows/ship-order.server";
 import { undoMove } from "~/flows/undo-move.server";
 import { eventsAfter } from "~/models/events.server";
 import { enterLedger, owedOnQuote } from "~/models/ledger.server";
@@ -26,6 +26,7 @@ import {
   makeQuoted,
   makeReceived,
   nest,
+  packAndLabel,
   refused,
   takeTabsOff,
 } from "../support/chain";
@@ -91,7 +92,8 @@ const move = async (
 describe("an order", () => {
   test("goes from draft to shipped, each step by whom it belongs to, each told once", async () => {
     const { orderId } = await tabsOff();
-    const { parcels } = await done(shipOrder(await asked(clerk, orderId)));
+    await packAndLabel(clerk, orderId);
+    const { parcels } = await done(handOver(await asked(clerk, orderId)));
     expect(await orderAsIs(orderId)).toMatchObject({ stage: "shipped", shippedAt: expect.any(Date) });
 
     const moves = await listStageMoves(db, orderId);
@@ -210,7 +212,7 @@ describe("guards", () => {
       ["nest before receiving", nest(operator, shop, [order.id])],
       ["cut before nesting", move(operator, order.id, "cut", "all")],
       ["tabs off before cutting", move(operator, order.id, "remove-tabs", "all")],
-      ["ship before making", shipOrder(await asked(clerk, order.id))],
+      ["ship before making", handOver(await asked(clerk, order.id))],
       ["revise once paid", reviseOrder(await asked(builder, order.id))],
       ["receive by a clerk", receiveOrder(await asked(clerk, order.id))],
       ["receive by the builder", receiveOrder(await asked(builder, order.id))],
@@ -232,15 +234,16 @@ describe("guards", () => {
 
   test("ship nothing that is owed for, and nothing by the router's operator", async () => {
     const { orderId } = await tabsOff();
-    expect(await refused(shipOrder(await asked(operator, orderId)))).toMatchObject({ reason: "not-allowed" });
+    expect(await refused(handOver(await asked(operator, orderId)))).toMatchObject({ reason: "not-allowed" });
     const order = await orderAsIs(orderId);
     await transact((tx) =>
       enterLedger(tx, { orderId, kind: "debt", amount: 500, currency: "usd", quoteId: order.quoteId }),
     );
-    expect(await refused(shipOrder(await asked(clerk, orderId)))).toMatchObject({ reason: "unpaid" });
+    expect(await refused(handOver(await asked(clerk, orderId)))).toMatchObject({ reason: "unpaid" });
     await transact((tx) => tx.delete(ledgerEntries));
     expect(await owedOnQuote(db, orderId, order.quoteId ?? "")).toBe(0);
-    await done(shipOrder(await asked(clerk, orderId)));
+    await packAndLabel(clerk, orderId);
+    await done(handOver(await asked(clerk, orderId)));
   });
 });
 
@@ -270,7 +273,8 @@ describe("undo", () => {
 
   test("takes back one step at a time, with a reason, as far as the order was received", async () => {
     const { orderId } = await tabsOff();
-    await done(shipOrder(await asked(clerk, orderId)));
+    await packAndLabel(clerk, orderId);
+    await done(handOver(await asked(clerk, orderId)));
     expect(await refused(undo(clerk, orderId))).toMatchObject({ reason: "wrong-stage" });
     expect(await done(undo(owner, orderId))).toMatchObject({ undone: "ship" });
     expect(await orderAsIs(orderId)).toMatchObject({ stage: "tabs-removed", shippedAt: null });
@@ -349,7 +353,7 @@ describe("a spoiled piece", () => {
     ]);
     await done(takeTabsOff(operator, orderId));
     expect(await stage(orderId)).toBe("tabs-removed");
-    expect(await refused(shipOrder(await asked(clerk, orderId)))).toMatchObject({ reason: "wrong-stage" });
+    expect(await refused(handOver(await asked(clerk, orderId)))).toMatchObject({ reason: "wrong-stage" });
 
     const { nest: second } = await done(nest(operator, shop, [orderId]));
     expect(
@@ -357,7 +361,8 @@ describe("a spoiled piece", () => {
     ).toHaveLength(1);
     await cutNest(operator, shop, second.id, MONDAY);
     await done(takeTabsOff(operator, orderId));
-    await done(shipOrder(await asked(clerk, orderId)));
+    await packAndLabel(clerk, orderId);
+    await done(handOver(await asked(clerk, orderId)));
     expect(await stage(orderId)).toBe("shipped");
     expect(
       (await listPieces(db, orderId)).filter(({ state }) => state === "good").map((piece) => piece.stage),

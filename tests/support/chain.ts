@@ -3,9 +3,12 @@ import { db } from "~/db/client.server";
 import { newId } from "~/db/schema";
 import type { ShipTo } from "~/domain/orders";
 import { approveQuote } from "~/flows/approve-quote.server";
+import { buyLabel } from "~/flows/buy-label.server";
+import { countPieces } from "~/flows/count-pieces.server";
 import { finishRun } from "~/flows/finish-run.server";
 import { movePieces } from "~/flows/move-pieces.server";
 import { nestOrders } from "~/flows/nest-orders.server";
+import { packOrder } from "~/flows/pack-order.server";
 import { partListHash } from "~/flows/part-list-hash.server";
 import { quoteOrder } from "~/flows/quote-order.server";
 import { receiveOrder } from "~/flows/receive-order.server";
@@ -13,6 +16,7 @@ import { scheduleSheet } from "~/flows/schedule-sheet.server";
 import { setDelivery } from "~/flows/set-delivery.server";
 import { startCheckout } from "~/flows/start-checkout.server";
 import { startRun } from "~/flows/start-run.server";
+import { suggestOrderParcels } from "~/flows/suggest-bundles.server";
 import type { Refusal, Verdict } from "~/flows/verdict";
 import { findCheckout } from "~/models/checkouts.server";
 import { listSheets } from "~/models/nests.server";
@@ -160,3 +164,19 @@ export async function cutNest(operator: TestPerson, shop: TestShop, nestId: stri
 
 export const takeTabsOff = async (operator: TestPerson, orderId: string) =>
   movePieces({ ...(await asked(operator, orderId)), act: "remove-tabs", pieceIds: "all" });
+
+/** The pile counted and packed as suggested; answers the parcels. */
+export async function pack(clerk: TestPerson, orderId: string) {
+  await done(countPieces({ actor: clerk, orderId, pieceIds: "all", counted: true }));
+  const suggested = await suggestOrderParcels(db, await orderAsIs(orderId), new Date());
+  const bundles = suggested.map(({ pieces }) => pieces);
+  return (await done(packOrder({ actor: clerk, orderId, bundles }))).parcels;
+}
+
+/** All that comes before a hand-over to the carrier. */
+export async function packAndLabel(clerk: TestPerson, orderId: string) {
+  const parcels = await pack(clerk, orderId);
+  for (const { id } of parcels)
+    await done(buyLabel({ actor: clerk, orderId, parcelId: id, service: "towpath-ground" }));
+  return parcels;
+}

@@ -70,7 +70,7 @@ export const SETTINGS: ShopSettings = {
     name: "Alder Ferry Panelworks",
     email: "desk@alder-ferry.example",
     phone: "555-0100",
-    address: ["4 Ferry Lane", "Marrow Point"],
+    address: ["4 Ferry Lane", "Marrow Point, WA 98399"],
     timeZone: "America/Los_Angeles",
     currency: "usd",
   },

@@ -5,6 +5,14 @@ export interface StageMailFacts extends OrderMailFacts {
   readonly stage: Stage;
   readonly promisedFor: Date | null;
   readonly delivery: "ship" | "pick-up" | null;
+  /** What the carrier took. */
+  readonly parcels: readonly ShippedParcel[];
+}
+
+export interface ShippedParcel {
+  readonly number: number;
+  readonly tracking: string | null;
+  readonly service: string | null;
 }
 
 /** What a builder wants to know at a stage; stages that say nothing new have no mail. */
@@ -15,9 +23,15 @@ export function stageMail(facts: StageMailFacts): Mail | null {
   return orderMail(facts, {
     subject: `${facts.reference} ${subject}`,
     paragraphs,
+    rows: facts.stage === "shipped" ? facts.parcels.map(parcelRow) : [],
     action: "Follow the order",
   });
 }
+
+const parcelRow = ({ number, tracking, service }: ShippedParcel) => ({
+  label: `Parcel ${number}${service ? `, ${service.replaceAll("-", " ")}` : ""}`,
+  value: tracking ?? "",
+});
 
 type Words = (facts: StageMailFacts) => { readonly subject: string; readonly paragraphs: readonly string[] };
 
@@ -48,12 +62,12 @@ const WORDS: Partial<Record<Stage, Words>> = {
     ],
   }),
   "tabs-removed": (facts) => ({
-    subject: facts.delivery === "pick-up" ? "is ready to pick up" : "is ready to pack",
+    subject: "has its tabs off",
     paragraphs: [
-      `The tabs of ${facts.reference} (${facts.orderName}) are off and its parts are counted.`,
+      `The tabs of ${facts.reference} (${facts.orderName}) are off and its edges are done.`,
       facts.delivery === "pick-up"
-        ? "You can pick it up in the shop's hours. Panels are heavy and their edges sharp: bring gloves and a second pair of hands."
-        : "It is packed next.",
+        ? "It is counted next; you are told as soon as you can pick it up."
+        : "It is counted and packed next.",
     ],
   }),
   shipped: (facts) => ({
@@ -62,7 +76,12 @@ const WORDS: Partial<Record<Stage, Words>> = {
       facts.delivery === "pick-up"
         ? `${facts.reference} (${facts.orderName}) was handed over to you.`
         : `${facts.reference} (${facts.orderName}) is on its way.`,
-      "Count the parts against the packing slip when you open it. Panels are heavy, their edges sharp, and wood dust is bad to breathe.",
+      ...(facts.delivery === "pick-up"
+        ? []
+        : [
+            "Look at each parcel before you sign: write visible damage on the carrier's receipt. Damage found inside must be told to the carrier within 5 business days, with the packaging kept.",
+          ]),
+      "Count the parts against the packing list. Panels are heavy, their edges sharp, and wood dust is bad to breathe.",
     ],
   }),
 };

@@ -32,7 +32,12 @@ type SizeLimits = Pick<ParcelLimits, "maxKilograms" | "maxLength" | "maxLengthPl
 const longSide = ({ width, height }: FlatPiece): number => Math.max(width, height);
 const shortSide = ({ width, height }: FlatPiece): number => Math.min(width, height);
 
-function stack(pieces: readonly FlatPiece[], packing: PackingAllowance, limits: SizeLimits): SuggestedParcel {
+/** The size and weight of these pieces closed up as one stack. There is at least one. */
+export function stackPieces(
+  pieces: readonly FlatPiece[],
+  limits: SizeLimits,
+  packing: PackingAllowance = SLEEVE,
+): SuggestedParcel {
   const face = {
     long: Math.max(...pieces.map(longSide)) + 2 * packing.around,
     short: Math.max(...pieces.map(shortSide)) + 2 * packing.around,
@@ -53,6 +58,10 @@ function stack(pieces: readonly FlatPiece[], packing: PackingAllowance, limits: 
   };
 }
 
+/** The largest first: outside, where it takes the knocks. */
+export const bySize = (one: FlatPiece, other: FlatPiece): number =>
+  longSide(other) - longSide(one) || shortSide(other) - shortSide(one) || one.id.localeCompare(other.id);
+
 /**
  * Stacks of flat pieces, sorted by size with the largest outside, each as full as the limits allow before the
  * next is begun. A piece that is beyond the limits on its own is a stack of one, marked oversize. Any part of a
@@ -64,19 +73,16 @@ export function suggestParcels(
   limits: SizeLimits,
   packing: PackingAllowance = SLEEVE,
 ): readonly SuggestedParcel[] {
-  const sorted = pieces.toSorted(
-    (one, other) =>
-      longSide(other) - longSide(one) || shortSide(other) - shortSide(one) || one.id.localeCompare(other.id),
-  );
+  const sorted = pieces.toSorted(bySize);
   const parcels: SuggestedParcel[] = [];
   let open: FlatPiece[] = [];
   for (const piece of sorted) {
-    if (open.length > 0 && stack([...open, piece], packing, limits).oversize) {
-      parcels.push(stack(open, packing, limits));
+    if (open.length > 0 && stackPieces([...open, piece], limits, packing).oversize) {
+      parcels.push(stackPieces(open, limits, packing));
       open = [];
     }
     open.push(piece);
   }
-  if (open.length > 0) parcels.push(stack(open, packing, limits));
+  if (open.length > 0) parcels.push(stackPieces(open, limits, packing));
   return parcels;
 }

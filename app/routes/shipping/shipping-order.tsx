@@ -18,7 +18,7 @@ import { ParcelsList } from "~/components/shop/parcels-list";
 import { useShownUnit } from "~/components/shown-unit";
 import { Cell, HeadCell, RowHead, Table, TableHead, TableRow } from "~/components/table";
 import { TextLink } from "~/components/text-link";
-import { shipOrder } from "~/flows/ship-order.server";
+import { handOver } from "~/flows/hand-over.server";
 import { dispatchAct, formAct } from "../dispatch-act.server";
 import type { Route } from "./+types/shipping-order";
 import { type ShippingView, shippingView } from "./shipping-view.server";
@@ -34,7 +34,7 @@ export async function action(args: Route.ActionArgs) {
   const { person, order } = await requireOrder(args, "shipping.edit", args.params.orderId);
   return dispatchAct(await args.request.formData(), {
     ship: formAct(shipSchema, async ({ to, ...move }) => {
-      const verdict = await shipOrder({ actor: person, orderId: order.id, ...move });
+      const verdict = await handOver({ actor: person, orderId: order.id, ...move });
       if (!verdict.ok) return verdict;
       const { parcels } = verdict;
       return {

@@ -3,7 +3,7 @@ import { db } from "~/db/client.server";
 import { checkMove, type Stage } from "~/domain/orders";
 import { dayOf } from "~/domain/scheduling";
 import { factsOfOrder } from "~/flows/order-facts.server";
-import { suggestOrderParcels } from "~/flows/ship-order.server";
+import { suggestOrderParcels } from "~/flows/suggest-bundles.server";
 import { owedOnQuote } from "~/models/ledger.server";
 import type { Order } from "~/models/orders.server";
 import { listParcels } from "~/models/parcels.server";
