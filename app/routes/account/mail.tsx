@@ -69,7 +69,7 @@ export default function Mail({ loaderData, actionData }: Route.ComponentProps) {
           </fieldset>
           <p className="text-small text-soft">
             Always sent: confirming your address, a new password, receipts, refunds, a part that is made
-            again, a hold, a cancelled order.
+            again, what waits to be picked up, a hold, an order that needs a change or is cancelled.
           </p>
           <Button variant="primary" pending={pending}>
             Save
