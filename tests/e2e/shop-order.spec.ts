@@ -8,6 +8,10 @@ const as = signedInAs(["operator", "clerk", "owner", "builder"]);
 const newestMove = (page: Page) =>
   page.getByRole("heading", { name: "History" }).locator("xpath=ancestor::section").locator("li").first();
 
+/** What the page says of the act just done. */
+const said = (page: Page, words: string | RegExp) =>
+  expect(page.getByRole("status").filter({ hasText: words })).toBeVisible();
+
 test("an order goes from the money to the carrier, one step taken back on the way", async () => {
   const name = "Galley carcass, port side";
   const id = await orderIdOf(name);
@@ -16,7 +20,7 @@ test("an order goes from the money to the carrier, one step taken back on the wa
   await operator.goto("/shop");
   const row = operator.getByRole("listitem").filter({ hasText: name }).last();
   await row.getByRole("button", { name: /^Receive/ }).click();
-  await expect(operator.getByRole("status")).toContainText("is received");
+  await said(operator, "is received");
 
   await operator.goto(`/shop/orders/${id}`);
   await expect(newestMove(operator)).toContainText("paid → received");
@@ -27,14 +31,15 @@ test("an order goes from the money to the carrier, one step taken back on the wa
   const nest = (await operator.getByRole("heading", { level: 1 }).textContent())?.replace("Nest ", "") ?? "";
 
   await operator.getByRole("link", { name: "Schedule its sheets" }).click();
+  await expect(operator.getByRole("heading", { level: 1, name: "Schedule" })).toBeVisible();
   const loose = operator.getByRole("listitem").filter({ hasText: `${nest}·` });
   const sheets = await loose.count();
   expect(sheets).toBeGreaterThan(0);
-  for (let sheet = 1; sheet <= sheets; sheet += 1) {
-    const item = loose.filter({ has: operator.getByRole("button", { name: "Put it on" }) }).first();
-    await item.getByLabel("Even if the day is full").check();
-    await item.getByRole("button", { name: "Put it on" }).click();
-    await expect(operator.getByRole("button", { name: "Put it on" })).toHaveCount(sheets - sheet);
+  const put = loose.getByRole("button", { name: "Put it on" });
+  for (let left = sheets; left > 0; left -= 1) {
+    await loose.getByLabel("Even if the day is full").first().check();
+    await put.first().click();
+    await expect(put).toHaveCount(left - 1);
   }
 
   await operator.goto(`/shop/orders/${id}`);
@@ -42,7 +47,7 @@ test("an order goes from the money to the carrier, one step taken back on the wa
     await operator.getByRole("button", { name: "Start cutting" }).first().click();
     await operator.getByLabel("It took").fill("12.5");
     await operator.getByRole("button", { name: "Finish" }).click();
-    await expect(operator.getByRole("status")).toContainText("The sheet is cut");
+    await said(operator, "The sheet is cut");
   }
   await expect(newestMove(operator)).toContainText("nested → cut");
 
@@ -62,7 +67,7 @@ test("an order goes from the money to the carrier, one step taken back on the wa
   await expect(clerk.getByRole("heading", { level: 1, name })).toBeVisible();
   await clerk.getByText("Hand over to the carrier").click();
   await clerk.getByRole("button", { name: "The carrier has it" }).click();
-  await expect(clerk.getByRole("status")).toContainText(/Handed over in \d+ parcel/);
+  await said(clerk, /Handed over in \d+ parcel/);
   await clerk.goto(`/shop/orders/${id}`);
   await expect(newestMove(clerk)).toContainText("tabs-removed → shipped");
 });
@@ -74,14 +79,14 @@ test("who comes second is told what happened meanwhile", async () => {
   await operator.goto(`/shop/orders/${id}`);
   await owner.goto(`/shop/orders/${id}`);
   await operator.getByRole("button", { name: /^Tabs off: all/ }).click();
-  await expect(operator.getByRole("status")).toContainText("Tabs are off");
+  await said(operator, "Tabs are off");
 
   await owner.getByText("Hold", { exact: true }).click();
   await owner.getByLabel("Why it is held").fill("The lot is measured again.");
   await owner.getByRole("button", { name: "Hold it" }).click();
-  await expect(owner.getByRole("status")).toContainText("Somebody was quicker");
-  await expect(owner.getByRole("status")).toContainText("tabs off");
-  await expect(owner.getByRole("status")).toContainText("Osker Brennick");
+  await said(owner, "Somebody was quicker");
+  await said(owner, "tabs off");
+  await said(owner, "Osker Brennick");
   await expect(newestMove(owner)).toContainText("cut → tabs-removed");
 });
 
@@ -100,7 +105,7 @@ test("the owner gives a part of the money back, and never more than is left", as
   await payments.getByLabel("Amount").fill("99999.00");
   await payments.getByLabel("Why; the builder is told").fill("More than was paid.");
   await payments.getByRole("button", { name: "Give it back" }).click();
-  await expect(owner.getByRole("status")).toContainText("is left to give back");
+  await said(owner, "is left to give back");
 
   await owner.goto("/owner/refunds");
   await expect(owner.getByRole("row").filter({ hasText: name })).toContainText("$12.25");

@@ -11,6 +11,7 @@ import { Money } from "~/components/money";
 import { Notice } from "~/components/notice";
 import { HeaderFact, PageHeader } from "~/components/page-header";
 import { Rail, RailSection } from "~/components/rail";
+import { seenAnew } from "~/components/seen-anew";
 import { Sheet } from "~/components/sheet";
 import { AddressLines } from "~/components/shop/address-lines";
 import { moveSchema } from "~/components/shop/order-acts";
@@ -47,6 +48,8 @@ export async function action(args: Route.ActionArgs) {
     }),
   });
 }
+
+export const shouldRevalidate = seenAnew;
 
 export const meta: Route.MetaFunction = () => [{ title: "Pack and ship · Kerfpost" }];
 

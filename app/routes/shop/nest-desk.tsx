@@ -10,6 +10,7 @@ import { ErrorPanel } from "~/components/error-panel";
 import { Notice } from "~/components/notice";
 import { PageHeader } from "~/components/page-header";
 import { Rail, RailSection } from "~/components/rail";
+import { seenAnew } from "~/components/seen-anew";
 import { Sheet } from "~/components/sheet";
 import { SheetViewer } from "~/components/sheet-viewer/sheet-viewer";
 import { NestOrdersList } from "~/components/shop/nest-orders-list";
@@ -65,6 +66,8 @@ export async function action(args: Route.ActionArgs) {
     }),
   });
 }
+
+export const shouldRevalidate = seenAnew;
 
 export const meta: Route.MetaFunction = () => [{ title: "Nest desk · Kerfpost" }];
 

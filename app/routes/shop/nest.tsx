@@ -12,6 +12,7 @@ import { plainField } from "~/components/field";
 import { Measure } from "~/components/measure";
 import { HeaderFact, PageHeader } from "~/components/page-header";
 import { Rail, RailSection } from "~/components/rail";
+import { seenAnew } from "~/components/seen-anew";
 import { Sheet } from "~/components/sheet";
 import { SheetViewer } from "~/components/sheet-viewer/sheet-viewer";
 import { NestOrdersList } from "~/components/shop/nest-orders-list";
@@ -49,6 +50,8 @@ export async function action(args: Route.ActionArgs) {
     }),
   });
 }
+
+export const shouldRevalidate = seenAnew;
 
 export const meta: Route.MetaFunction = ({ loaderData }) => [
   {

@@ -13,6 +13,7 @@ import { PriceLines } from "~/components/order/price-lines";
 import { useOrderFocus } from "~/components/order/use-order-focus";
 import { HeaderFact, PageHeader } from "~/components/page-header";
 import { Rail, RailSection } from "~/components/rail";
+import { seenAnew } from "~/components/seen-anew";
 import { ExceptionActs } from "~/components/shop/exception-acts";
 import { NextActs } from "~/components/shop/next-acts";
 import { BuilderFacts, StockFacts } from "~/components/shop/order-facts";
@@ -36,6 +37,8 @@ export async function action(args: Route.ActionArgs) {
   const { person, order } = await requireOrder(args, "queue.read", args.params.orderId);
   return actOnStaffOrder(await args.request.formData(), { person, orderId: order.id });
 }
+
+export const shouldRevalidate = seenAnew;
 
 export const meta: Route.MetaFunction = ({ loaderData }) => [
   { title: `${loaderData?.reference ?? "Order"} · Kerfpost` },

@@ -9,6 +9,7 @@ import { ErrorPanel } from "~/components/error-panel";
 import { plainField } from "~/components/field";
 import { PageHeader } from "~/components/page-header";
 import { Pagination } from "~/components/pagination";
+import { seenAnew } from "~/components/seen-anew";
 import { SelectField } from "~/components/select-field";
 import { KeysDialog } from "~/components/shop/keys-dialog";
 import { QueueDays } from "~/components/shop/queue-days";
@@ -58,6 +59,8 @@ export async function action(args: Route.ActionArgs) {
     }),
   });
 }
+
+export const shouldRevalidate = seenAnew;
 
 export const meta: Route.MetaFunction = () => [{ title: "Queue · Kerfpost" }];
 

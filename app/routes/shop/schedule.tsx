@@ -6,6 +6,7 @@ import { ButtonLink } from "~/components/button-link";
 import { ErrorPanel } from "~/components/error-panel";
 import { Size } from "~/components/measure";
 import { PageHeader } from "~/components/page-header";
+import { seenAnew } from "~/components/seen-anew";
 import { Sheet } from "~/components/sheet";
 import { DayRule } from "~/components/shop/day-rule";
 import { finishRunSchema, startRunSchema } from "~/components/shop/order-acts";
@@ -67,6 +68,8 @@ export async function action(args: Route.ActionArgs) {
     }),
   });
 }
+
+export const shouldRevalidate = seenAnew;
 
 export const meta: Route.MetaFunction = () => [{ title: "Schedule · Kerfpost" }];
 
