@@ -12,6 +12,7 @@ export default [
     route("invitation/:token", "routes/public/invitation.tsx"),
     route("terms", "routes/public/terms.tsx"),
     route("unsubscribe", "routes/public/unsubscribe.tsx"),
+    route("api-guide", "routes/public/api-guide.tsx"),
   ]),
 
   layout("routes/account/layout.tsx", [
@@ -21,6 +22,7 @@ export default [
       route("mail", "routes/account/mail.tsx"),
       route("password", "routes/account/password.tsx"),
       route("sessions", "routes/account/sessions.tsx"),
+      route("keys", "routes/account/keys.tsx"),
     ]),
   ]),
   route("sign-out", "routes/account/sign-out.ts"),
@@ -59,18 +61,26 @@ export default [
     ]),
   ]),
 
-  ...prefix("api", [
-    route("uploads", "routes/api/uploads.ts"),
-    ...prefix("orders/:orderId", [
-      route("price", "routes/api/price.ts"),
-      route("events", "routes/api/events.ts"),
-      route("geometry/:key", "routes/api/geometry.ts"),
-      route("drawings/:drawingId", "routes/api/drawing.ts"),
-      route("messages", "routes/api/messages.ts"),
-      route("messages/read", "routes/api/thread-read.ts"),
-      route("attachments/:attachmentId", "routes/api/attachment.ts"),
+  layout(
+    "routes/api/layout.ts",
+    prefix("api", [
+      route("openapi.json", "routes/api/openapi.ts"),
+      route("uploads", "routes/api/uploads.ts"),
+      route("orders", "routes/api/orders.ts"),
+      route("orders/:orderId", "routes/api/order.ts"),
+      ...prefix("orders/:orderId", [
+        route("status", "routes/api/status.ts"),
+        route("price", "routes/api/price.ts"),
+        route("events", "routes/api/events.ts"),
+        route("geometry/:key", "routes/api/geometry.ts"),
+        route("drawings/:drawingId", "routes/api/drawing.ts"),
+        route("messages", "routes/api/messages.ts"),
+        route("messages/read", "routes/api/thread-read.ts"),
+        route("attachments/:attachmentId", "routes/api/attachment.ts"),
+      ]),
+      route("*", "routes/api/nowhere.ts"),
     ]),
-  ]),
+  ),
 
   route("webhooks/payments", "routes/webhooks/payments.ts"),
 ] satisfies RouteConfig;

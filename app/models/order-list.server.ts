@@ -1,4 +1,4 @@
-import { and, count, desc, eq, inArray, or, sql } from "drizzle-orm";
+import { and, count, desc, eq, gte, inArray, lt, or, sql } from "drizzle-orm";
 import type { Executor } from "~/db/client.server";
 import { orders, quotes } from "~/db/schema";
 import type { Stage } from "~/domain/orders";
@@ -40,18 +40,66 @@ export async function pageOfOrders(
     .limit(search.size)
     .offset((search.page - 1) * search.size);
   const [counted] = await executor.select({ found: count() }).from(orders).where(asked);
-  return {
-    rows: rows.map(({ order, quote }) => ({
-      ...order,
-      quote: quote && {
-        total: quote.total,
-        currency: quote.currency,
-        status: quote.status,
-        expiresAt: quote.expiresAt,
-      },
-    })),
-    found: counted?.found ?? 0,
-  };
+  return { rows: rows.map(listed), found: counted?.found ?? 0 };
+}
+
+const listed = ({
+  order,
+  quote,
+}: {
+  order: Order;
+  quote: typeof quotes.$inferSelect | null;
+}): ListedOrder => ({
+  ...order,
+  quote: quote && {
+    total: quote.total,
+    currency: quote.currency,
+    status: quote.status,
+    expiresAt: quote.expiresAt,
+  },
+});
+
+/** Where a list of orders was left: the last one that was given. */
+export interface OrderPlace {
+  readonly createdAt: Date;
+  readonly id: string;
+}
+
+export interface OrderWalk extends Omit<OrderSearch, "page" | "size"> {
+  /** Only orders changed at this instant or later. */
+  readonly changedSince?: Date | undefined;
+  /** Goes on behind this order; begins with the newest when left out. */
+  readonly after?: OrderPlace | undefined;
+  readonly limit: number;
+}
+
+/** Orders within the scope, newest first, from a place on: an order made meanwhile shifts nothing. */
+export async function ordersBehind(
+  executor: Executor,
+  scope: OrderScope,
+  walk: OrderWalk,
+): Promise<ListedOrder[]> {
+  const { after, changedSince } = walk;
+  const rows = await executor
+    .select({ order: orders, quote: quotes })
+    .from(orders)
+    .leftJoin(quotes, eq(quotes.id, orders.quoteId))
+    .where(
+      and(
+        within(scope),
+        inStages(walk.stages),
+        withWords(walk.words),
+        changedSince && gte(orders.updatedAt, changedSince),
+        after &&
+          or(
+            lt(orders.createdAt, after.createdAt),
+            and(eq(orders.createdAt, after.createdAt), lt(orders.id, after.id)),
+          ),
+      ),
+    )
+    .orderBy(desc(orders.createdAt), desc(orders.id))
+    .limit(walk.limit);
+  return rows.map(listed);
 }
 
 /** How many orders within the scope stand in each stage. */

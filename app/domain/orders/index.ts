@@ -1,4 +1,6 @@
 export { ACCESS, ACTS, type Act, mayDo } from "./access";
+export { API_SCOPE_WORDS, API_SCOPES, type ApiScope, isApiScope } from "./api-scope";
+export { type ApiWaiting, apiWaiting, WAITING_CODES, type WaitingCode } from "./api-waiting";
 export { type InterpretedFile, interpretFiles, type LayerChoice } from "./default-interpretation";
 export {
   type FileInterpretation,

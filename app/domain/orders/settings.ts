@@ -9,6 +9,11 @@ export const shopSettingsSchema = z.object({
     address: z.array(z.string()).min(1),
     timeZone: z.string(),
     currency: z.literal("usd"),
+    /** The shop's own GS1 company prefix, for container codes on its parcels; most small shops have none. */
+    gs1Prefix: z
+      .string()
+      .regex(/^\d{7,10}$/)
+      .optional(),
   }),
   /** Where the shop collects sales tax. An accountant sets these. */
   tax: z.object({

@@ -7,6 +7,7 @@ const TABS = [
   { to: "/account/mail", label: "E-mail" },
   { to: "/account/password", label: "Password" },
   { to: "/account/sessions", label: "Signed in at" },
+  { to: "/account/keys", label: "API keys" },
 ];
 
 /** The head of every account page. */

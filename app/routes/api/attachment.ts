@@ -2,6 +2,9 @@ import { requireOrder } from "~/auth/guards.server";
 import { openAttachment } from "~/flows/open-attachment.server";
 import type { Route } from "./+types/attachment";
 import { downloadResponse } from "./download.server";
+import { only } from "./methods.server";
+
+export const middleware: Route.MiddlewareFunction[] = [only("GET")];
 
 /** A file that hangs on a message, only ever as a download; one on a staff note is not there for a builder. */
 export async function loader(args: Route.LoaderArgs) {

@@ -1,11 +1,14 @@
-import { requireOrder } from "~/auth/guards.server";
+import { requireApiOrder } from "~/auth/guards.server";
 import { followOrder } from "~/flows/follow-order.server";
 import type { Route } from "./+types/events";
+import { only } from "./methods.server";
+
+export const middleware: Route.MiddlewareFunction[] = [only("GET")];
 
 /** What happens to an order, live. A page that was cut off goes on from its `Last-Event-ID`. */
 export async function loader(args: Route.LoaderArgs) {
   const { request, params } = args;
-  const { order, scope } = await requireOrder(args, "order.read", params.orderId);
+  const { order, scope } = await requireApiOrder(args, "order.read", "events:read", params.orderId);
   const stream = followOrder({
     orderId: order.id,
     reader: scope.kind,

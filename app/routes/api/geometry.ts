@@ -2,6 +2,9 @@ import { gunzipSync } from "node:zlib";
 import { requireOrder } from "~/auth/guards.server";
 import { findOrderGeometry } from "~/flows/find-order-geometry.server";
 import type { Route } from "./+types/geometry";
+import { only } from "./methods.server";
+
+export const middleware: Route.MiddlewareFunction[] = [only("GET")];
 
 /** The parts of an order by content hash: kept by the browser for good, and by nobody between. */
 export async function loader(args: Route.LoaderArgs) {

@@ -18,7 +18,10 @@ import { REFUSAL_STATUS, type Refusal } from "~/flows/verdict";
 import type { KeptFile } from "~/models/attachments.server";
 import { takeToken } from "~/models/rate-limits.server";
 import type { Route } from "./+types/messages";
+import { only } from "./methods.server";
 import { threadView } from "./thread-view.server";
+
+export const middleware: Route.MiddlewareFunction[] = [only("GET", "POST")];
 
 /** What a message is answered with; `words` is a sentence for whoever wrote it. */
 export type MessageReply = { ok: true; messageId: string } | { ok: false; words: string };

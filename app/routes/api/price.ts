@@ -6,6 +6,9 @@ import type { PricedQuote } from "~/domain/pricing";
 import { priceOrder } from "~/flows/price-order.server";
 import { REFUSAL_STATUS } from "~/flows/verdict";
 import type { Route } from "./+types/price";
+import { only } from "./methods.server";
+
+export const middleware: Route.MiddlewareFunction[] = [only("POST")];
 
 /** What may differ from what is saved; left out, the saved choice counts. */
 const askedSchema = z.object({

@@ -4,6 +4,9 @@ import { requireSameOrigin } from "~/auth/same-origin.server";
 import { markThreadRead } from "~/flows/mark-read.server";
 import { REFUSAL_STATUS } from "~/flows/verdict";
 import type { Route } from "./+types/thread-read";
+import { only } from "./methods.server";
+
+export const middleware: Route.MiddlewareFunction[] = [only("POST")];
 
 const readSchema = z.object({ messageId: z.string().min(1).max(64) });
 

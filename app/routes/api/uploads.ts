@@ -13,6 +13,9 @@ import { uploadDrawing } from "~/flows/upload-drawing.server";
 import { takeToken } from "~/models/rate-limits.server";
 import { findSettings } from "~/models/settings.server";
 import type { Route } from "./+types/uploads";
+import { only } from "./methods.server";
+
+export const middleware: Route.MiddlewareFunction[] = [only("POST")];
 
 /** What became of one file; `reason` is a sentence for the builder. */
 export type UploadedFile =

@@ -1,0 +1,14 @@
+import { only } from "./methods.server";
+
+export const middleware = [only("GET", "POST")];
+
+/** Every address under /api that is none. */
+export function loader() {
+  return notThere();
+}
+
+export function action() {
+  return notThere();
+}
+
+const notThere = () => Response.json({ words: "There is no such address in the API." }, { status: 404 });
