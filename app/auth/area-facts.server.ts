@@ -1,6 +1,6 @@
 import { db } from "~/db/client.server";
 import { mayDo } from "~/domain/orders";
-import { countAllUnread } from "~/models/messages.server";
+import { listUnreadOrders } from "~/models/messages.server";
 import { countTroubledMails } from "~/models/outbox.server";
 import { findSettings } from "~/models/settings.server";
 import { navFor, rolesInWords } from "./areas";
@@ -23,14 +23,14 @@ export async function areaFacts(person: Person | null) {
 
 export type AreaFacts = Awaited<ReturnType<typeof areaFacts>>;
 
-/** A person's ways, with how much waits there: unread messages, mails that did not arrive. */
+/** A person's ways, with how much waits there: orders with unread messages, mails that did not arrive. */
 async function navOf(person: Person) {
   const { id: userId, roles } = person;
   const waiting: Record<string, number> = {};
   if (mayDo(roles, "order.create"))
-    waiting["/orders"] = await countAllUnread(db, { userId, scope: { kind: "builder", userId } });
+    waiting["/orders"] = (await listUnreadOrders(db, { userId, scope: { kind: "builder", userId } })).length;
   if (mayDo(roles, "queue.read"))
-    waiting["/shop"] = await countAllUnread(db, { userId, scope: { kind: "staff" } });
-  if (mayDo(roles, "mail.resend")) waiting["/owner/mail"] = await countTroubledMails(db);
+    waiting["/shop"] = (await listUnreadOrders(db, { userId, scope: { kind: "staff" } })).length;
+  if (mayDo(roles, "mail.resend")) waiting["/owner"] = await countTroubledMails(db);
   return navFor(roles).map((way) => ({ ...way, waiting: waiting[way.to] ?? 0 }));
 }

@@ -125,13 +125,13 @@ export async function countUnread(
   return new Map(rows.map(({ orderId, unread }) => [orderId, unread]));
 }
 
-/** How many messages a person has not read in all orders of a scope. */
-export async function countAllUnread(
+/** Orders of a scope in which there is something that the person has not read. */
+export async function listUnreadOrders(
   executor: Executor,
   { userId, scope }: { readonly userId: string; readonly scope: OrderScope },
-): Promise<number> {
-  const [row] = await executor
-    .select({ unread: count() })
+): Promise<string[]> {
+  const rows = await executor
+    .selectDistinct({ orderId: messages.orderId })
     .from(messages)
     .innerJoin(orders, eq(orders.id, messages.orderId))
     .innerJoin(users, eq(users.id, userId))
@@ -142,5 +142,5 @@ export async function countAllUnread(
         unreadBy({ userId, reader: scope.kind }),
       ),
     );
-  return row?.unread ?? 0;
+  return rows.map(({ orderId }) => orderId);
 }

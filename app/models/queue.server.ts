@@ -34,6 +34,8 @@ import type { Piece } from "./pieces.server";
 
 export interface QueueSearch {
   readonly stages: readonly Stage[];
+  /** Only these orders. */
+  readonly ids?: readonly string[] | undefined;
   /** Only orders that use this stock. */
   readonly materialId?: string | undefined;
   /** Part of a reference, an order's name or its builder's. */
@@ -81,6 +83,7 @@ export async function pageOfQueue(
 ): Promise<{ readonly rows: QueuedOrder[]; readonly found: number }> {
   const asked = and(
     inArray(orders.stage, [...search.stages]),
+    search.ids && inArray(orders.id, [...search.ids]),
     search.shippedSince && gte(orders.shippedAt, search.shippedSince),
     search.materialId === undefined ? undefined : onStock(search.materialId),
     withWords(search.words),

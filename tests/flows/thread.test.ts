@@ -9,7 +9,7 @@ import { openAttachment } from "~/flows/open-attachment.server";
 import { type PostMessageOptions, postMessage } from "~/flows/post-message.server";
 import { createDraftOrder } from "~/models/draft-orders.server";
 import { eventsAfter } from "~/models/events.server";
-import { countAllUnread, countUnread, listMessages } from "~/models/messages.server";
+import { countUnread, listMessages, listUnreadOrders } from "~/models/messages.server";
 import { done, refused } from "../support/chain";
 import { resetDatabase } from "../support/database";
 import { shelvesDxf } from "../support/drawings";
@@ -92,8 +92,8 @@ describe("notes for the staff", () => {
     expect(await eventsAfter(db, orderId, 0, "builder")).toEqual([]);
     expect(await unreadOf(builder, "builder")).toBe(0);
     expect(
-      await countAllUnread(db, { userId: builder.id, scope: { kind: "builder", userId: builder.id } }),
-    ).toBe(0);
+      await listUnreadOrders(db, { userId: builder.id, scope: { kind: "builder", userId: builder.id } }),
+    ).toEqual([]);
     expect(await db.select().from(outbox)).toEqual([]);
 
     const [note] = await listMessages(db, { orderId, reader: "staff", limit: 10 });
@@ -126,7 +126,7 @@ describe("unread", () => {
     ]).toEqual([3, 3, 0]);
     await done(markThreadRead({ actor: operator, orderId, messageId }));
     expect([await unreadOf(operator, "staff"), await unreadOf(second, "staff")]).toEqual([1, 3]);
-    expect(await countAllUnread(db, { userId: operator.id, scope: { kind: "staff" } })).toBe(1);
+    expect(await listUnreadOrders(db, { userId: operator.id, scope: { kind: "staff" } })).toEqual([orderId]);
   });
 
   test("reading an older message again takes nothing back", async () => {
@@ -136,6 +136,7 @@ describe("unread", () => {
     await done(markThreadRead({ actor: operator, orderId, messageId: second.messageId }));
     await done(markThreadRead({ actor: operator, orderId, messageId: first.messageId }));
     expect(await unreadOf(operator, "staff")).toBe(0);
+    expect(await listUnreadOrders(db, { userId: operator.id, scope: { kind: "staff" } })).toEqual([]);
   });
 
   test("somebody who came later is not told of what was written before", async () => {

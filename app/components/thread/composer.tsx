@@ -179,7 +179,7 @@ function PointingChoice({ kept, offered, onChange }: PointingChoiceProps) {
     <Button type="button" size="small" onClick={() => onChange(offered)}>
       <SpotMark />
       <span>
-        Point at <SpotWords {...offered} />
+        Point at <SpotWords {...offered} within />
       </span>
     </Button>
   );

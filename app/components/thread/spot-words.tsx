@@ -11,16 +11,21 @@ export function SpotMark() {
   );
 }
 
+interface SpotWordsProps extends Pointing {
+  /** Inside a sentence rather than at its start. */
+  readonly within?: boolean;
+}
+
 /** `Part C at 210.0, 310.0 mm`. */
-export function SpotWords({ partLabel, spot }: Pointing) {
+export function SpotWords({ partLabel, spot, within = false }: SpotWordsProps) {
   return (
     <span>
       {partLabel ? (
         <>
-          Part <span className="measure">{partLabel}</span>
+          {within ? "part" : "Part"} <span className="measure">{partLabel}</span>
         </>
       ) : (
-        "The drawing"
+        `${within ? "the" : "The"} drawing`
       )}
       {spot && (
         <>

@@ -5,7 +5,7 @@ import { Button } from "~/components/button";
 import { EmptyState } from "~/components/empty-state";
 import { plainField } from "~/components/field";
 import { MailDetail } from "~/components/mail/mail-detail";
-import { MailTable } from "~/components/mail/mail-table";
+import { MailList } from "~/components/mail/mail-list";
 import { Notice } from "~/components/notice";
 import { PageHeader } from "~/components/page-header";
 import { Pagination } from "~/components/pagination";
@@ -162,7 +162,7 @@ export default function Mail({ loaderData, actionData }: Route.ComponentProps) {
             {filtered ? "No mail fits." : "No mail yet. The first one is written when somebody signs up."}
           </EmptyState>
         ) : (
-          <MailTable mails={mails} requestId={requestId} openHref={(id) => hrefOf(filter, { mail: id })} />
+          <MailList mails={mails} requestId={requestId} openHref={(id) => hrefOf(filter, { mail: id })} />
         )}
       </Sheet>
       <Pagination page={filter.page} pages={pages} hrefOf={(page) => hrefOf(filter, { page })} />

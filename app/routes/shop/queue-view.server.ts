@@ -2,12 +2,12 @@ import { silhouetteOf } from "~/components/drawing-viewer/view-geometry-of";
 import type { QueueItem } from "~/components/shop/queue-row";
 import { waitingWords } from "~/components/shop/waiting-words";
 import { db } from "~/db/client.server";
-import { SHOP_STAGES, type Stage } from "~/domain/orders";
+import { SHOP_STAGES, STAGES, type Stage } from "~/domain/orders";
 import { addDays, dayOf, instantAt, minutesOn, shownDay, weekdayOf } from "~/domain/scheduling";
 import { findLargestPart } from "~/flows/find-largest-part.server";
 import { listMachines } from "~/models/machines.server";
 import { listMaterials } from "~/models/materials.server";
-import { countUnread } from "~/models/messages.server";
+import { countUnread, listUnreadOrders } from "~/models/messages.server";
 import { countByStage } from "~/models/order-list.server";
 import { countShippedSince, pageOfQueue, type QueuedOrder } from "~/models/queue.server";
 import { listRuns } from "~/models/runs.server";
@@ -26,6 +26,8 @@ export const VIEWS = {
   "tabs-removed": ["tabs-removed"],
   shipped: ["shipped"],
   answer: ANSWERS,
+  /** Whatever its stage: a builder may ask before there is a quote. */
+  unread: STAGES,
 } as const satisfies Record<string, readonly Stage[]>;
 export type QueueViewName = keyof typeof VIEWS;
 
@@ -45,7 +47,9 @@ export async function queueView(query: QueueQuery, readerId: string, now = new D
   /* A week of the shop begins on Monday. */
   const monday = addDays(today, -((weekdayOf(today) + 6) % 7));
   const weekBegan = instantAt(monday, "00:00", shop.timeZone);
+  const waiting = await listUnreadOrders(db, { userId: readerId, scope: { kind: "staff" } });
   const { rows, found } = await pageOfQueue(db, {
+    ids: query.view === "unread" ? waiting : undefined,
     stages: VIEWS[query.view],
     materialId: query.material,
     words: query.words,
@@ -77,6 +81,7 @@ export async function queueView(query: QueueQuery, readerId: string, now = new D
       "tabs-removed": countOf(["tabs-removed"]),
       shipped: await countShippedSince(db, weekBegan),
       answer: countOf(ANSWERS),
+      unread: waiting.length,
     } satisfies Record<QueueViewName, number>,
     materials: (await listMaterials(db)).map(({ id, name }) => ({ id, name })),
     requestId: crypto.randomUUID(),

@@ -23,7 +23,16 @@ import { dispatchAct, formAct } from "../dispatch-act.server";
 import type { Route } from "./+types/queue";
 import { queueView } from "./queue-view.server";
 
-const VIEW_NAMES = ["owed", "received", "nested", "cut", "tabs-removed", "shipped", "answer"] as const;
+const VIEW_NAMES = [
+  "owed",
+  "received",
+  "nested",
+  "cut",
+  "tabs-removed",
+  "shipped",
+  "answer",
+  "unread",
+] as const;
 const SEARCH_ID = "queue-search";
 
 /** Whatever cannot be read of an address falls back to the whole queue. */
@@ -72,6 +81,7 @@ const TAB_WORDS: Readonly<Record<(typeof VIEW_NAMES)[number], string>> = {
   "tabs-removed": "tabs-removed",
   shipped: "shipped this week",
   answer: "needs an answer",
+  unread: "unread messages",
 };
 
 export default function Queue({ loaderData, actionData }: Route.ComponentProps) {
@@ -105,7 +115,7 @@ export default function Queue({ loaderData, actionData }: Route.ComponentProps) 
           label: TAB_WORDS[view],
           count: queue.counts[view],
           active: view === query.view,
-          warn: view === "answer",
+          warn: view === "answer" || view === "unread",
           apart: view === "answer",
         }))}
       />
