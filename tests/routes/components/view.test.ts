@@ -5,6 +5,7 @@ import {
   roundLength,
   toDrawing,
   toScreen,
+  viewAt,
   viewShowing,
   zoomedView,
 } from "~/components/drawing-viewer/view";
@@ -54,6 +55,19 @@ describe("the view of a drawing", () => {
     [0.0101, 70, 10_000],
   ])("at %f px a millimetre a scale of at least %i px is %i mm", (scale, pixels, length) => {
     expect(roundLength(scale, pixels)).toBeCloseTo(length, 6);
+  });
+});
+
+describe("a place that is pointed at", () => {
+  const size = { width: 1000, height: 500 };
+
+  it("comes to the middle, near enough to see half a metre around it, and no farther than it was", () => {
+    const far = viewAt({ scale: 0.1, x: 7, y: 9 }, [1200, 300], size);
+    expect(far.scale).toBe(1);
+    expect(toScreen(far, [1200, 300])).toEqual([500, 250]);
+    const near = viewAt({ scale: 8, x: 0, y: 0 }, [1200, 300], size);
+    expect(near.scale).toBe(8);
+    expect(toScreen(near, [1200, 300])).toEqual([500, 250]);
   });
 });
 
