@@ -8,6 +8,8 @@ import type { Person } from "./session.server";
 
 /** Until the shop has settings of its own. */
 const ZONE = "UTC";
+/** For how long a mail that did not arrive is counted; it stays in the list after that. */
+const TROUBLE_MS = 14 * 24 * 3_600_000;
 
 /** What the frame of every page needs to know: who is there, their ways, the shop's zone. */
 export async function areaFacts(person: Person | null) {
@@ -31,6 +33,7 @@ async function navOf(person: Person) {
     waiting["/orders"] = (await listUnreadOrders(db, { userId, scope: { kind: "builder", userId } })).length;
   if (mayDo(roles, "queue.read"))
     waiting["/shop"] = (await listUnreadOrders(db, { userId, scope: { kind: "staff" } })).length;
-  if (mayDo(roles, "mail.resend")) waiting["/owner"] = await countTroubledMails(db);
+  if (mayDo(roles, "mail.resend"))
+    waiting["/owner"] = await countTroubledMails(db, new Date(Date.now() - TROUBLE_MS));
   return navFor(roles).map((way) => ({ ...way, waiting: waiting[way.to] ?? 0 }));
 }

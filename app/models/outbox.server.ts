@@ -1,4 +1,4 @@
-import { and, asc, count, desc, eq, inArray, isNull, lte, notExists, or, sql } from "drizzle-orm";
+import { and, asc, count, desc, eq, gte, inArray, isNull, lte, notExists, or, sql } from "drizzle-orm";
 import { alias } from "drizzle-orm/sqlite-core";
 import type { Executor } from "~/db/client.server";
 import { newId, orders, outbox } from "~/db/schema";
@@ -263,8 +263,11 @@ export async function listTroubledMails(
     .limit(20);
 }
 
-/** How many mails did not arrive and wait for the owner. */
-export async function countTroubledMails(executor: Executor): Promise<number> {
-  const [row] = await executor.select({ mails: count() }).from(outbox).where(troubled(executor));
+/** How many mails since an instant did not arrive and wait for the owner. */
+export async function countTroubledMails(executor: Executor, since: Date): Promise<number> {
+  const [row] = await executor
+    .select({ mails: count() })
+    .from(outbox)
+    .where(and(gte(outbox.createdAt, since), troubled(executor)));
   return row?.mails ?? 0;
 }
