@@ -104,4 +104,4 @@ const isApi = (request: Request): boolean => new URL(request.url).pathname.start
 
 /** What is thrown: an API route's answer, made a problem document on its way out, or what a page's boundary shows. */
 const turnedAway = (request: Request, status: number, words: string) =>
-  isApi(request) ? Response.json({ words }, { status }) : data({ words }, { status });
+  isApi(request) ? new Response(words, { status }) : data({ words }, { status });

@@ -20,6 +20,7 @@ export const PAGES: Readonly<Record<WhoLooks, readonly ShownPage[]>> = {
   visitor: [
     { name: "home", path: "/" },
     { name: "terms", path: "/terms" },
+    { name: "API", path: "/api-guide" },
     { name: "sign in", path: "/sign-in" },
     { name: "sign up", path: "/sign-up" },
     { name: "forgot password", path: "/forgot-password" },
@@ -39,6 +40,7 @@ export const PAGES: Readonly<Record<WhoLooks, readonly ShownPage[]>> = {
     ]),
     { name: "account", path: "/account" },
     { name: "addresses", path: "/account/addresses" },
+    { name: "API keys", path: "/account/keys" },
     { name: "no such order", path: "/orders/none" },
   ],
   operator: [

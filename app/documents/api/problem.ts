@@ -70,7 +70,7 @@ interface ProblemFacts {
   readonly instance: string;
   /** Address of this site, without a slash at its end. */
   readonly site: string;
-  /** What the route itself answered: text, or an object whose `words` or `reason` is a sentence. */
+  /** What the route itself answered: text, or an object whose `detail`, `words` or `reason` is a sentence. */
   readonly given: unknown;
 }
 
@@ -80,21 +80,21 @@ export function problemOf({ status, instance, site, given }: ProblemFacts): Prob
   const kind = PROBLEM_KINDS[status] ?? (status >= 500 ? broken : PROBLEM_KINDS[400]);
   if (!kind) throw new Error("There is no kind of problem for this status.");
   const told = status === 500 ? null : toldBy(given);
-  return {
-    ...told?.more,
+  const own = {
     type: `${site}/api-guide#${problemAnchor(kind)}`,
     title: kind.title,
     status,
     detail: told?.words || kind.detail,
     instance,
   };
+  return { ...own, ...told?.more, ...own };
 }
 
 function toldBy(given: unknown): { words: string | null; more: Record<string, unknown> } | null {
   if (typeof given === "string") return { words: given, more: {} };
   if (typeof given !== "object" || given === null) return null;
-  const { words, reason } = given as Record<string, unknown>;
-  const said = [words, reason].find((one) => typeof one === "string");
+  const { detail, words, reason } = given as Record<string, unknown>;
+  const said = [detail, words, reason].find((one) => typeof one === "string");
   // A fault that the router itself found says nothing in words of ours.
   if (typeof said !== "string" && !("files" in given)) return null;
   return { words: typeof said === "string" ? said : null, more: { ...given } };

@@ -7,9 +7,9 @@ export function only(...methods: readonly ("GET" | "POST")[]): MiddlewareFunctio
     taken.includes(request.method)
       ? next()
       : Promise.resolve(
-          Response.json(
-            { words: `${request.method} is not taken here.` },
-            { status: 405, headers: { Allow: taken.join(", ") } },
-          ),
+          new Response(`${request.method} is not taken here.`, {
+            status: 405,
+            headers: { Allow: taken.join(", ") },
+          }),
         );
 }

@@ -11,4 +11,4 @@ export function action() {
   return notThere();
 }
 
-const notThere = () => Response.json({ words: "There is no such address in the API." }, { status: 404 });
+const notThere = () => new Response("There is no such address in the API.", { status: 404 });

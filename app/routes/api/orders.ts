@@ -20,8 +20,8 @@ export async function loader(args: Route.LoaderArgs) {
       name: issue.code === "unrecognized_keys" ? issue.keys.join(", ") : String(issue.path[0] ?? ""),
       words: issue.message,
     }));
-    const words = errors.map((error) => `${error.name}: ${error.words}.`).join(" ");
-    return Response.json({ words, errors }, { status: 422 });
+    const detail = errors.map((error) => `${error.name}: ${error.words}.`).join(" ");
+    return Response.json({ detail, errors }, { status: 422 });
   }
   const { stage, q, since, limit, cursor } = asked.data;
   const found = await ordersBehind(db, scopeOf(person), {

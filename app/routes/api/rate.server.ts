@@ -20,10 +20,10 @@ export const limitRate: MiddlewareFunction<Response> = async ({ request, context
   const response =
     used <= limit
       ? await next()
-      : Response.json(
-          { words: `That is more than ${limit} requests a minute. Wait ${resetSeconds} seconds.` },
-          { status: 429, headers: { "Retry-After": String(resetSeconds) } },
-        );
+      : new Response(`That is more than ${limit} requests a minute. Wait ${resetSeconds} seconds.`, {
+          status: 429,
+          headers: { "Retry-After": String(resetSeconds) },
+        });
   response.headers.set("RateLimit-Limit", String(limit));
   response.headers.set("RateLimit-Remaining", String(Math.max(0, limit - used)));
   response.headers.set("RateLimit-Reset", String(resetSeconds));
