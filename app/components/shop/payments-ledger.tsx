@@ -46,7 +46,9 @@ export function PaymentsLedger({ order }: { readonly order: StaffOrderView }) {
       {order.mayRefund &&
         payments
           .filter(({ left }) => left > 0)
-          .map((payment) => <RefundForm key={`${payment.checkoutId} ${payment.left}`} order={order} payment={payment} />)}
+          .map((payment) => (
+            <RefundForm key={`${payment.checkoutId} ${payment.left}`} order={order} payment={payment} />
+          ))}
     </RailSection>
   );
 }

@@ -30,7 +30,7 @@ export function PlaceForm({ sheetId, runVersion, places, at }: PlaceFormProps) {
   return (
     <ActForm intent="schedule" fields={{ key: sheetId, sheetId, runVersion }}>
       {(pending) => (
-        <>
+        <div className="space-y-2">
           <div className="grid grid-cols-2 gap-2">
             <SelectField
               field={plainField("machineId", {
@@ -58,7 +58,7 @@ export function PlaceForm({ sheetId, runVersion, places, at }: PlaceFormProps) {
           <Button size="small" variant={isMove ? "plain" : "chosen"} pending={pending}>
             {isMove ? "Move it" : "Put it on"}
           </Button>
-        </>
+        </div>
       )}
     </ActForm>
   );
@@ -86,7 +86,7 @@ export function LooseSheetItem({
 }) {
   return (
     <li
-      className={`space-y-2 border-l-4 px-4 py-3 ${asked ? "border-blue bg-blue-wash" : "border-transparent"}`}
+      className={`space-y-2 border-l-4 px-4 py-3 ${asked ? "border-l-blue bg-blue-wash" : "border-l-transparent"}`}
     >
       <p className="flex items-baseline justify-between gap-3">
         <Link

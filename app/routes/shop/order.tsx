@@ -85,10 +85,12 @@ export default function StaffOrder({ loaderData: order, actionData }: Route.Comp
         }
         rail={
           <>
-            <Rail label="Acts">
-              <NextActs order={order} />
-              <ExceptionActs order={order} />
-            </Rail>
+            <div id="acts" tabIndex={-1} className="scroll-mt-4 outline-none">
+              <Rail label="Acts">
+                <NextActs order={order} />
+                <ExceptionActs order={order} />
+              </Rail>
+            </div>
             <Rail label="The order">
               <StockFacts stocks={order.stocks} />
               {parts.length > 0 && <PartsList parts={parts} focus={focus} />}
@@ -123,7 +125,7 @@ function Heading({ order }: { readonly order: StaffOrderView }) {
         }
         title={order.name}
         right={
-          <>
+          <div className="flex flex-wrap items-end gap-x-6 gap-y-2">
             {between && (
               <HeaderFact label="stands" late>
                 {order.stage}
@@ -137,7 +139,13 @@ function Heading({ order }: { readonly order: StaffOrderView }) {
                 {dateWords(new Date(due), zone)}
               </HeaderFact>
             )}
-          </>
+            <a
+              href="#acts"
+              className="text-small text-blue underline underline-offset-2 lg:hidden print:hidden"
+            >
+              What to do
+            </a>
+          </div>
         }
       />
       {order.stage !== "cancelled" && <SteelRule stages={stages} at={at} late={late} />}
