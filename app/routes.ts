@@ -43,6 +43,9 @@ export default [
       route("nest", "routes/shop/nest-desk.tsx"),
       route("nest/:nestId", "routes/shop/nest.tsx"),
       route("schedule", "routes/shop/schedule.tsx"),
+      route("bench", "routes/shop/bench.tsx"),
+      route("bench/orders/:orderId", "routes/shop/bench-order.tsx"),
+      route("bench/sheets/:sheetId", "routes/shop/bench-sheet.tsx"),
     ]),
   ]),
 
@@ -51,6 +54,18 @@ export default [
       index("routes/shipping/shipping-list.tsx"),
       route(":orderId", "routes/shipping/shipping-order.tsx"),
     ]),
+  ]),
+
+  /** Printed things and what the bench sends: no pages. */
+  ...prefix("shipping/:orderId", [
+    route("packing-list.pdf", "routes/shipping/packing-list.ts"),
+    route("parcels/:parcelId/label.pdf", "routes/shipping/parcel-label.ts"),
+    route("signature.svg", "routes/shipping/signature.ts"),
+  ]),
+  ...prefix("shop", [
+    route("orders/:orderId/labels.pdf", "routes/shop/part-labels.ts"),
+    route("sheets/:sheetId/labels.pdf", "routes/shop/sheet-labels.ts"),
+    route("bench/acts", "routes/shop/bench-acts.ts"),
   ]),
 
   layout("routes/owner/layout.tsx", [

@@ -13,6 +13,7 @@ const AREAS: readonly Area[] = [
   { to: "/shop", label: "Queue", act: "queue.read" },
   { to: "/shop/nest", label: "Nest desk", act: "nest.edit" },
   { to: "/shop/schedule", label: "Schedule", act: "schedule.edit" },
+  { to: "/shop/bench", label: "Bench", act: "piece.move" },
   { to: "/shipping", label: "Shipping", act: "shipping.read" },
   { to: "/owner/refunds", label: "Refunds", act: "refund.make" },
   { to: "/owner/staff", label: "Staff", act: "staff.invite" },
