@@ -97,7 +97,7 @@ function Orders({ rows, isShipped }: OrdersProps) {
         <HeadCell>order</HeadCell>
         <HeadCell>goes to</HeadCell>
         <HeadCell numeric>counted</HeadCell>
-        <HeadCell>{isShipped ? "" : "stands in the way"}</HeadCell>
+        <HeadCell>{isShipped ? "" : "stands"}</HeadCell>
         <HeadCell numeric>{isShipped ? "handed over" : "promised"}</HeadCell>
       </TableHead>
       <tbody>
@@ -118,11 +118,15 @@ function Orders({ rows, isShipped }: OrdersProps) {
             </Cell>
             <Cell numeric>
               <span className={row.ready < row.expected ? "text-amber" : ""}>
-                {row.ready} of {row.expected}
+                {row.counted} of {row.expected}
               </span>
             </Cell>
             <Cell>
-              <span className="text-amber">{row.blocks.join(", ")}</span>
+              {row.blocks.length > 0 ? (
+                <span className="text-amber">{row.blocks.join(", ")}</span>
+              ) : (
+                !isShipped && row.stands
+              )}
             </Cell>
             <Cell numeric>
               <span className={row.late ? "text-amber" : ""}>

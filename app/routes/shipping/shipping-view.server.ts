@@ -1,17 +1,11 @@
-import type { Person } from "~/auth/guards.server";
 import { db } from "~/db/client.server";
-import { checkMove, type Stage } from "~/domain/orders";
+import type { Stage } from "~/domain/orders";
 import { dayOf } from "~/domain/scheduling";
-import { factsOfOrder } from "~/flows/order-facts.server";
-import { suggestOrderParcels } from "~/flows/suggest-bundles.server";
 import { owedOnQuote } from "~/models/ledger.server";
-import type { Order } from "~/models/orders.server";
-import { listParcels } from "~/models/parcels.server";
-import { findAddressee } from "~/models/people.server";
+import { listParcels, standingLabel } from "~/models/parcels.server";
 import { listPieces, type PieceWithPart } from "~/models/pieces.server";
 import { pageOfQueue } from "~/models/queue.server";
 import { currentSettings } from "~/models/settings.server";
-import { listStageMoves } from "~/models/stage-moves.server";
 
 export const PAGE_SIZE = 25;
 
@@ -24,10 +18,11 @@ export const SHIPPING_VIEWS = {
 export type ShippingViewName = keyof typeof SHIPPING_VIEWS;
 
 /** The counted pieces of an order against those it has to have. */
-function counted(pieces: readonly Pick<PieceWithPart, "state" | "stage">[]) {
+function counted(pieces: readonly Pick<PieceWithPart, "state" | "stage" | "countedAt">[]) {
   const good = pieces.filter(({ state }) => state === "good");
   return {
     ready: good.filter(({ stage }) => stage === "tabs-removed" || stage === "shipped").length,
+    counted: good.filter(({ stage, countedAt }) => stage === "shipped" || countedAt !== null).length,
     expected: good.length,
   };
 }
@@ -45,6 +40,20 @@ function blocksOf(facts: {
       : []),
     ...(facts.owed > 0 ? ["not paid in full"] : []),
   ];
+}
+
+/** How far the clerk is with it, in words. */
+function standsAt(
+  delivery: "ship" | "pick-up" | null,
+  { counted, expected }: { readonly counted: number; readonly expected: number },
+  parcels: Awaited<ReturnType<typeof listParcels>>,
+): string {
+  if (counted < expected) return "to count";
+  if (delivery === "pick-up") return "waits for its builder";
+  if (parcels.length === 0) return "to pack";
+  const labelled = parcels.filter((parcel) => standingLabel(parcel)).length;
+  const count = `${parcels.length} ${parcels.length === 1 ? "parcel" : "parcels"}`;
+  return labelled < parcels.length ? `${count}, ${labelled} labelled` : `${count}, to hand over`;
 }
 
 /** The clerk's queue, the earliest promise first. */
@@ -88,87 +97,10 @@ export async function shippingList(query: {
             dayOf(order.promisedFor, shop.timeZone) < today,
           shippedAt: order.shippedAt?.toISOString() ?? null,
           ...facts,
+          stands: standsAt(order.delivery, facts, await listParcels(db, order.id)),
           blocks: order.stage === "shipped" ? [] : blocksOf(facts),
         };
       }),
     ),
   };
-}
-
-/** One order at the packing bench. Sizes in millimetres, weights in kilograms, packing included. */
-export async function shippingView(order: Order, person: Person, now = new Date()) {
-  const facts = await factsOfOrder(db, order, now);
-  const verdict = checkMove(
-    "ship",
-    facts,
-    person.roles.filter((role) => role !== "builder"),
-  );
-  const pieces = await listPieces(db, order.id);
-  const builder = await findAddressee(db, order.builderId);
-  const packed = await listParcels(db, order.id);
-  const moves = await listStageMoves(db, order.id);
-  const labels = [...new Set(pieces.map(({ part }) => part.label))];
-  return {
-    id: order.id,
-    reference: order.reference,
-    name: order.name,
-    stage: order.stage,
-    version: order.version,
-    delivery: order.delivery,
-    shipTo: order.shipTo,
-    builder: builder?.name ?? "",
-    promisedFor: order.promisedFor?.toISOString() ?? null,
-    shippedAt: order.shippedAt?.toISOString() ?? null,
-    requestId: crypto.randomUUID(),
-    ship: verdict.ok
-      ? { may: true as const, why: null }
-      : { may: false as const, why: verdict.words, notMine: verdict.why === "not-allowed" },
-    owed: facts.owed,
-    blocks: order.stage === "shipped" ? [] : blocksOf({ ...counted(pieces), owed: facts.owed }),
-    parts: labels.map((label) => {
-      const mine = pieces.filter(({ part }) => part.label === label);
-      const part = mine[0]?.part;
-      return {
-        label,
-        name: part && part.name !== part.letter ? part.name : null,
-        width: part?.width ?? 0,
-        height: part?.height ?? 0,
-        ...counted(mine),
-      };
-    }),
-    suggested:
-      packed.length > 0 || pieces.length === 0
-        ? []
-        : (await suggestOrderParcels(db, order, now)).map((parcel, index) => ({
-            number: index + 1,
-            length: parcel.length,
-            width: parcel.width,
-            height: parcel.height,
-            kilograms: parcel.kilograms,
-            oversize: parcel.oversize,
-            content: contentOf(parcel.pieces, pieces),
-          })),
-    packed: packed.map((parcel) => ({
-      number: parcel.number,
-      length: parcel.length,
-      width: parcel.width,
-      height: parcel.height,
-      kilograms: parcel.weight,
-      handedOverAt: parcel.handedOverAt?.toISOString() ?? null,
-      content: contentOf(
-        pieces.filter(({ parcelId }) => parcelId === parcel.id).map(({ id }) => id),
-        pieces,
-      ),
-    })),
-    last: moves.at(-1)?.createdAt.toISOString() ?? null,
-  };
-}
-export type ShippingView = Awaited<ReturnType<typeof shippingView>>;
-
-/** `A ×2, B ×4`: what lies in a parcel. */
-function contentOf(ids: readonly string[], pieces: readonly PieceWithPart[]): string {
-  const inside = new Map<string, number>();
-  for (const piece of pieces)
-    if (ids.includes(piece.id)) inside.set(piece.part.label, (inside.get(piece.part.label) ?? 0) + 1);
-  return [...inside].map(([label, count]) => `${label} ×${count}`).join(", ");
 }

@@ -1,0 +1,20 @@
+import { z } from "zod";
+import { requireAct } from "~/auth/guards.server";
+import { requireSameOrigin } from "~/auth/same-origin.server";
+import { benchAct, benchActSchema } from "~/flows/bench-act.server";
+import { REFUSAL_STATUS } from "~/flows/verdict";
+import type { Route } from "./+types/bench-acts";
+
+/** One act of the bench, sent by its page as often as it takes to arrive; it is done once. */
+export async function action(args: Route.ActionArgs) {
+  const person = await requireAct(args, "piece.move");
+  requireSameOrigin(args.request);
+  const asked = benchActSchema.safeParse(await args.request.json().catch(() => undefined));
+  if (!asked.success)
+    return Response.json(
+      { ok: false, reason: "invalid", words: z.prettifyError(asked.error) },
+      { status: 400 },
+    );
+  const done = await benchAct(person, asked.data);
+  return Response.json(done, { status: done.ok ? 200 : REFUSAL_STATUS[done.reason] });
+}
