@@ -11,8 +11,9 @@ import { moduleFile } from "~/jobs/worker-files.server";
 import type { OrderDrawing } from "~/models/drawing-files.server";
 import type { Reading, ReadingSummary } from "~/models/readings.server";
 import { storage } from "~/services/clients.server";
-import { sha256Of, storeGeometry } from "./geometry-store.server";
+import { isGeometryStored, sha256Of, storeGeometry } from "./geometry-store.server";
 import { orderInterpretation } from "./order-interpretation.server";
+import { createReportShelf } from "./report-shelf";
 
 /** Raise it with every change that finds other parts in some drawing: reports are then made anew. */
 const FINDER_VERSION = "1";
@@ -27,6 +28,8 @@ export type FileParts = { readonly drawingId: string; readonly sha256: string; r
       readonly readingId: string;
       readonly summary: ReadingSummary;
       readonly geometry: FileGeometry;
+      /** Under which its report is kept: equal keys mean equal reports. */
+      readonly reportKey: string;
     }
 );
 
@@ -65,12 +68,28 @@ export async function findOrderParts({ order, content }: FindOrderPartsOptions):
       ),
     ),
   );
-  const read = files.flatMap((file) => (file.state === "read" ? [file.geometry] : []));
+  const read = files.filter((file) => file.state === "read");
   return {
     interpretation: { id: current.id, number: current.number, content: chosen },
     files,
-    geometryKey: read.length > 0 ? await storeGeometry({ files: read }) : null,
+    geometryKey: read.length > 0 ? await geometryKeyOf(read) : null,
   };
+}
+
+/** Hashing a large drawing's geometry takes a second; what it is made of says whether it was hashed before. */
+const HASHES_KEPT = 1_000;
+const hashes = new Map<string, string>();
+
+async function geometryKeyOf(files: readonly Extract<FileParts, { state: "read" }>[]): Promise<string> {
+  const made = files
+    .map(({ sha256, reportKey, geometry }) => `${sha256} ${reportKey} ${geometry.confirmed}`)
+    .join("\n");
+  const known = hashes.get(made);
+  if (known !== undefined && (await isGeometryStored(known))) return known;
+  const key = await storeGeometry({ files: files.map(({ geometry }) => geometry) });
+  if (hashes.size >= HASHES_KEPT) hashes.clear();
+  hashes.set(made, key);
+  return key;
 }
 
 const REFUSALS: Record<TaskRefusal, string> = {
@@ -100,21 +119,31 @@ async function partsOfFile(
     layers,
     report: found.report,
   };
-  return { ...file, state: "read", readingId: reading.id, summary, geometry };
+  return { ...file, state: "read", readingId: reading.id, summary, geometry, reportKey: found.key };
 }
+
+const shelf = createReportShelf();
 
 /** The report from storage, or found now and stored. The key names everything the report depends on. */
 async function reportOf(drawingKey: string, asked: Pick<FindPartsInput, "unit" | "layers">) {
   const key = `reports/${sha256Of(canonicalJson({ drawingKey, ...asked, finder: FINDER_VERSION }))}`;
+  const recent = shelf.take(key);
+  if (recent) return { ok: true, key, report: recent } as const;
   const known = await storage.get(key);
-  if (known) return { ok: true, report: parseReport(known) } as const;
+  if (known) return shelved(key, known);
   const drawing = await storage.get(drawingKey);
   if (!drawing) throw new Error(`The drawing ${drawingKey} is not in the storage.`);
   const input: FindPartsInput = { drawing, ...asked };
   const found = await runInPool<Uint8Array>({ file: await moduleFile("find-parts.worker"), input });
   if (!found.ok) return found;
   await storage.put(key, found.result, "application/gzip");
-  return { ok: true, report: parseReport(found.result) } as const;
+  return shelved(key, found.result);
+}
+
+function shelved(key: string, stored: Uint8Array) {
+  const report = parseReport(stored);
+  shelf.put(key, report, stored.byteLength);
+  return { ok: true, key, report } as const;
 }
 
 const parseReport = (stored: Uint8Array): FileGeometry["report"] =>

@@ -8,11 +8,14 @@ const objectKey = (geometryKey: string) => `geometry/${geometryKey}`;
 
 export const sha256Of = (text: string): string => createHash("sha256").update(text).digest("hex");
 
+export const isGeometryStored = (geometryKey: string): Promise<boolean> =>
+  storage.exists(objectKey(geometryKey));
+
 /** Keeps a document under the hash of its canonical JSON, and gives the hash. */
 export async function storeGeometry(document: GeometryDocument): Promise<string> {
   const json = canonicalJson(document);
   const geometryKey = sha256Of(json);
-  if (!(await storage.exists(objectKey(geometryKey))))
+  if (!(await isGeometryStored(geometryKey)))
     await storage.put(objectKey(geometryKey), gzipSync(json), "application/gzip");
   return geometryKey;
 }

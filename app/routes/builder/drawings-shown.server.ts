@@ -6,6 +6,8 @@ import type { Finding } from "~/domain/fit";
 
 /** A drawing larger than this, in characters of JSON, is loaded after the page instead of with it. */
 const WITH_THE_PAGE = 400_000;
+/** More curves than this are never as small as that; the shape of the drawing is then not even made here. */
+const CURVES_WITH_THE_PAGE = 20_000;
 
 /** Drawings for the viewer. */
 export function shownDrawings(
@@ -15,7 +17,10 @@ export function shownDrawings(
     sha256: geometry.sha256,
     fileName,
     number: index + 1,
-    geometry: smallEnough(viewGeometryOf(geometry.report)),
+    geometry:
+      geometry.report.drawn.curves > CURVES_WITH_THE_PAGE
+        ? null
+        : smallEnough(viewGeometryOf(geometry.report)),
   }));
 }
 

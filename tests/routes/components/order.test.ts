@@ -62,8 +62,10 @@ describe("the form of a drawing's layers", () => {
   });
 
   it("asks for the depth that is missing, at its field", () => {
-    expect(sent({ kind: "pocket", how: "depth" }).error).toEqual({ "layers[0].value": ["Say how much."] });
-    expect(sent({ kind: "pocket", how: "depth", value: "-2" }).error).toEqual({
+    expect(sent({ kind: "pocket", how: "depth" }).reply().error).toEqual({
+      "layers[0].value": ["Say how much."],
+    });
+    expect(sent({ kind: "pocket", how: "depth", value: "-2" }).reply().error).toEqual({
       "layers[0].value": ["More than nothing."],
     });
   });
@@ -73,7 +75,7 @@ describe("other forms of the order", () => {
   it("say what an address lacks in words", () => {
     const { error } = parseWithZod(form({ intent: "new-address", version: "1", "shipTo.postcode": "12" }), {
       schema: newAddressSchema,
-    });
+    }).reply();
     expect(error).toEqual({
       "shipTo.recipient": ["Who receives it?"],
       "shipTo.line1": ["Street and number"],
@@ -85,10 +87,10 @@ describe("other forms of the order", () => {
 
   it("do not pay without the approval, nor cancel without a reason", () => {
     const pay = { intent: "pay", version: "1", quoteId: "q", listHash: "h" };
-    expect(parseWithZod(form(pay), { schema: paySchema }).error).toHaveProperty("approved");
+    expect(parseWithZod(form(pay), { schema: paySchema }).reply().error).toHaveProperty("approved");
     expect(parseWithZod(form({ ...pay, approved: "yes" }), { schema: paySchema }).status).toBe("success");
     const cancel = { intent: "cancel", version: "1", requestId: crypto.randomUUID() };
-    expect(parseWithZod(form(cancel), { schema: cancelSchema }).error).toEqual({
+    expect(parseWithZod(form(cancel), { schema: cancelSchema }).reply().error).toEqual({
       reason: ["Say why it is cancelled."],
     });
   });
