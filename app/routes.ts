@@ -69,12 +69,26 @@ export default [
   ]),
 
   layout("routes/owner/layout.tsx", [
+    ...prefix("shop/stock", [
+      index("routes/owner/stock.tsx"),
+      route("materials/:materialId", "routes/owner/material.tsx"),
+      route("materials/:materialId/lots/new", "routes/owner/new-lot.tsx"),
+      route("lots/:lotId", "routes/owner/lot.tsx"),
+    ]),
     ...prefix("owner", [
+      index("routes/owner/figures.tsx"),
+      route("tools", "routes/owner/tools.tsx"),
+      route("machines", "routes/owner/machines.tsx"),
+      route("price-book", "routes/owner/price-book.tsx"),
+      route("price-book/draft", "routes/owner/price-book-draft.tsx"),
+      route("settings", "routes/owner/settings.tsx"),
+      route("audit", "routes/owner/audit.tsx"),
       route("refunds", "routes/owner/refunds.tsx"),
       route("staff", "routes/owner/staff.tsx"),
       route("mail", "routes/owner/mail.tsx"),
     ]),
   ]),
+  route("owner/audit.csv", "routes/owner/audit-csv.ts"),
 
   layout(
     "routes/api/layout.ts",

@@ -15,9 +15,8 @@ const AREAS: readonly Area[] = [
   { to: "/shop/schedule", label: "Schedule", act: "schedule.edit" },
   { to: "/shop/bench", label: "Bench", act: "piece.move" },
   { to: "/shipping", label: "Shipping", act: "shipping.read" },
-  { to: "/owner/refunds", label: "Refunds", act: "refund.make" },
-  { to: "/owner/staff", label: "Staff", act: "staff.invite" },
-  { to: "/owner/mail", label: "Mail", act: "mail.resend" },
+  { to: "/shop/stock", label: "Lots", act: "stock.edit" },
+  { to: "/owner", label: "Office", act: "figures.read" },
   { to: "/account", label: "Account", act: "account.edit" },
 ];
 

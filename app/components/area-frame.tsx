@@ -1,3 +1,4 @@
+import type { ReactNode } from "react";
 import { Form, Outlet } from "react-router";
 import { AppShell, type NavItem, type Person } from "./app-shell";
 import { Button } from "./button";
@@ -15,16 +16,19 @@ interface AreaFrameProps {
     readonly unverified: boolean;
   };
   readonly width?: "full" | "read";
+  /** Above the page: the area's own ways. */
+  readonly children?: ReactNode;
 }
 
 /** The frame of an area's pages: its ways, the reader's unit, the shop's time zone. */
-export function AreaFrame({ facts, width }: AreaFrameProps) {
+export function AreaFrame({ facts, width, children }: AreaFrameProps) {
   const { who, nav, shownUnit, zone, unverified } = facts;
   return (
     <ShopZoneProvider zone={zone}>
       <ShownUnitProvider unit={shownUnit}>
         <AppShell nav={nav} who={who} width={width}>
           {unverified && <Unverified />}
+          {children}
           <Outlet />
         </AppShell>
       </ShownUnitProvider>

@@ -1,9 +1,10 @@
+import { thicknessOf } from "~/domain/fit";
 import type { Executor } from "../client.server";
 import { lotReadings, lots, machines, materials, priceBookVersions, settings, tools } from "../schema";
 import { DEMO_MACHINES, DEMO_TOOLS } from "./machines";
 import { DEMO_PRICE_BOOK } from "./price-book";
 import { DEMO_SETTINGS } from "./settings";
-import { DEMO_MATERIALS, type DemoLot, thicknessOf } from "./stock";
+import { DEMO_MATERIALS, type DemoLot } from "./stock";
 
 const DAY = 24 * 60 * 60_000;
 

@@ -41,13 +41,6 @@ const stackReadings = (
     POINTS.map(([position, off]) => ({ sheet, position, thickness: hundredths(middles[i] + off * spread) })),
   );
 
-/** What a lot's readings come to, the mean to a hundredth of a millimetre. */
-export function thicknessOf(readings: readonly LotReading[]): { min: number; mean: number; max: number } {
-  const values = readings.map(({ thickness }) => thickness);
-  const sum = values.reduce((total, value) => total + value, 0);
-  return { min: Math.min(...values), mean: hundredths(sum / values.length), max: Math.max(...values) };
-}
-
 const METRIC = { sheetLength: 2440, sheetWidth: 1220 } as const;
 const IMPERIAL = { sheetLength: 2438.4, sheetWidth: 1219.2 } as const;
 

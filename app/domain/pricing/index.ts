@@ -12,4 +12,5 @@ export type {
   QuoteFacts,
   QuoteLine,
 } from "./quote";
+export { type PricedBefore, type Repriced, reprice } from "./reprice";
 export { nestedArea, type PlannedStock, planSheets, planStock } from "./sheets";
