@@ -11,7 +11,7 @@ import { isMuted, mailPerson } from "./mail-person.server";
 
 /** One mail a thread and person in this time, unless they have read it meanwhile. */
 export const GATHER_MS = 5 * 60_000;
-/** A mail never tells what is older, nor more than this many messages: the thread has them all. */
+/** A mail never tells what is older, nor more than this many messages, which it then says: the thread has them all. */
 const OLDEST_MS = 24 * 3_600_000;
 const MOST_MESSAGES = 20;
 export const MESSAGE_MAIL = "message";
@@ -63,10 +63,10 @@ async function mailThread(tx: Executor, person: Addressee, options: MailMessageO
     orderId: order.id,
     side,
     after: new Date(told),
-    limit: MOST_MESSAGES,
+    limit: MOST_MESSAGES + 1,
   });
   if (fresh.length === 0) return;
-  const messages = await withFiles(tx, fresh);
+  const messages = await withFiles(tx, fresh.slice(-MOST_MESSAGES));
   const { shop } = await currentSettings(tx);
   const page = side === "shop" ? "orders" : "shop/orders";
   await mailPerson(tx, {
@@ -85,6 +85,7 @@ async function mailThread(tx: Executor, person: Addressee, options: MailMessageO
         timeZone: shop.timeZone,
         unsubscribe,
         messages,
+        earlier: fresh.length > MOST_MESSAGES,
       }),
   });
 }

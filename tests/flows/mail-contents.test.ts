@@ -173,6 +173,7 @@ const MAILS: readonly (readonly [string, Mail, readonly string[]])[] = [
   [
     "message",
     messageMail({
+      earlier: false,
       ...ORDER,
       unsubscribe: OFF,
       messages: [

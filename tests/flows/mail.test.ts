@@ -104,6 +104,21 @@ describe("mails of messages", () => {
     expect(inboxOf(builder)[0]?.text).toMatch(/> First[\s\S]*> Second/);
   });
 
+  test("of more than twenty messages have the newest, and say that there are others", async () => {
+    await write(operator, "First", 0);
+    await sendAt(0);
+    for (let n = 1; n <= 22; n++) await write(operator, `number ${n}.`, 1 + n / 60);
+    await sendAt(6);
+    const mail = inboxOf(builder).at(-1);
+    expect(mail?.subject).toBe(`More than 20 messages on ${reference} from Odile Marsh`);
+    for (const part of [mail?.text, mail?.html]) {
+      expect(part).toContain("the earlier ones stand there");
+      expect(part).toContain("number 3.");
+      expect(part).toContain("number 22.");
+      expect(part).not.toContain("number 2.");
+    }
+  });
+
   test("what is read meanwhile is not mailed, and the next message is mailed at once", async () => {
     await write(operator, "First", 0);
     await sendAt(0);

@@ -14,18 +14,22 @@ export interface MailedMessage {
 export interface MessageMailFacts extends OrderMailFacts {
   /** Oldest first, at least one. */
   readonly messages: readonly MailedMessage[];
+  /** There are older ones that are not told here. */
+  readonly earlier: boolean;
 }
 
 /** What the other side wrote in an order's thread; several that came close together in one mail. */
 export function messageMail(facts: MessageMailFacts): Mail {
-  const { messages, reference, orderName } = facts;
+  const { messages, earlier, reference, orderName } = facts;
   const names = [...new Set(messages.map(({ authorName }) => authorName))].join(" and ");
   const one = messages.length === 1;
   return orderMail(facts, {
     subject: one
       ? `${names} wrote on ${reference}`
-      : `${messages.length} messages on ${reference} from ${names}`,
-    paragraphs: [`In the thread of ${reference} (${orderName}):`],
+      : `${earlier ? "More than " : ""}${messages.length} messages on ${reference} from ${names}`,
+    paragraphs: [
+      `In the thread of ${reference} (${orderName}${earlier ? "; the earlier ones stand there" : ""}):`,
+    ],
     quotes: messages.map((message) => ({
       from: `${message.authorName}, ${mailTime(message.writtenAt, facts.timeZone)}`,
       words: message.body,
