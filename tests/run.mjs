@@ -45,7 +45,11 @@ function must(title, command, args, env) {
 }
 
 if (newer("package-lock.json", "node_modules/.package-lock.json")) must("install packages", "npm", ["ci"]);
-const missing = [["/usr/bin/chromium", "chromium"]].filter(([file]) => !existsSync(file));
+const missing = [
+  ["/usr/bin/chromium", "chromium"],
+  ["/usr/bin/zbarimg", "zbar-tools"],
+  ["/usr/bin/pdftoppm", "poppler-utils"],
+].filter(([file]) => !existsSync(file));
 if (missing.length > 0) {
   must("update package lists", "apt-get", ["update", "-qq"]);
   must(
