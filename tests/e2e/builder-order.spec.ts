@@ -1,6 +1,6 @@
 import { expect, test } from "@playwright/test";
 import { answerQuestions, asBuilder, payByCard, pickUp, shownTotal, toQuote, upload } from "./builder-steps";
-import { drawnFile } from "./drawn-file";
+import { drawnFile, squareFile } from "./drawn-file";
 import { orderIdOf } from "./pages";
 
 const signedIn = asBuilder();
@@ -23,8 +23,6 @@ test("a builder uploads, sees the parts, is quoted, approves, pays and follows t
   const price = await shownTotal(page);
 
   await page.getByRole("button", { name: "Get a firm quote" }).click();
-  await expect(page.getByText("One question waits for your answer")).toBeVisible();
-  await page.getByRole("button", { name: "It is as it should be" }).click();
   const pay = page.getByRole("button", { name: /^Pay \$/ });
   await expect(pay).toBeVisible();
   expect(await shownTotal(page)).toBe(price);
@@ -40,6 +38,20 @@ test("a builder uploads, sees the parts, is quoted, approves, pays and follows t
   await expect(page.getByRole("img", { name: /^Stage paid/ })).toBeVisible();
   await expect(page.getByText("Paid by card")).toBeVisible();
   expect(await shownTotal(page)).toBe(price);
+});
+
+test("a question about the drawing is answered before it is paid", async () => {
+  const page = await signedIn();
+  // 60 mm square is under the 9 square inches that can be held (common practice, no source).
+  await upload(page, [squareFile("small-cover.dxf", 60)]);
+  await answerQuestions(page, "9 mm birch");
+  await pickUp(page);
+  await page.getByRole("button", { name: "Get a firm quote" }).click();
+  await expect(page.getByText("One question waits for your answer")).toBeVisible();
+  await expect(page.getByText(/is too small to hold well/)).toBeVisible();
+  await expect(page.getByRole("button", { name: /^Pay \$/ })).toHaveCount(0);
+  await page.getByRole("button", { name: "It is as it should be" }).click();
+  await expect(page.getByRole("button", { name: /^Pay \$/ })).toBeVisible();
 });
 
 test("a card that is declined, then a page that is left: the order stays payable and says what happened", async () => {

@@ -71,7 +71,7 @@ test("a drawing without a part says so and is taken out; another joins the order
   await expect(page.getByText("· 1 drawing")).toBeVisible();
   await expect(page.getByRole("link", { name: /No part in/ })).toHaveCount(0);
 
-  await page.locator("input[type=file]").setInputFiles([drawnFile("drawer-fronts")]);
+  await page.getByLabel("Add a drawing").setInputFiles([drawnFile("drawer-fronts")]);
   await expect(page.getByText("· 2 drawings")).toBeVisible();
   await expect(page.getByRole("button", { name: "2A" })).toBeVisible();
 });
