@@ -51,10 +51,11 @@ export function ProgressPanel({ pieces, parcels, pickUp }: ProgressPanelProps) {
       )}
       {parcels.length > 0 && (
         <ul className="mt-3 space-y-1">
-          {parcels.map(({ number, weight, tracking }) => (
+          {parcels.map(({ number, weight, tracking, status }) => (
             <li key={number} className="flex flex-wrap justify-between gap-x-4">
               <span>
                 Parcel {number}, <span className="measure">{weight.toFixed(1)} kg</span>
+                {status && <span className="text-soft">, {status.replaceAll("-", " ")}</span>}
               </span>
               {tracking.map((code) => (
                 <span key={code} className="measure">

@@ -116,6 +116,11 @@ function TabsOff({ order }: { readonly order: StaffOrderView }) {
         state={state}
         label={`Tabs off: all ${count(cut.length, "piece")} good`}
       />
+      {state?.may && (
+        <ButtonLink wide to={`/shop/bench/orders/${order.id}`}>
+          Piece by piece at the bench
+        </ButtonLink>
+      )}
       {state?.may && cut.length > 1 && (
         <details>
           <summary className="text-blue">Only some of them</summary>

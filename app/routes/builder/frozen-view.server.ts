@@ -2,6 +2,7 @@ import type { ShownPart } from "~/components/order/order-view";
 import { db } from "~/db/client.server";
 import { checkMove, progressOf, SHOP_STAGES } from "~/domain/orders";
 import { compareQuotes } from "~/domain/pricing";
+import { findTracking } from "~/flows/find-tracking.server";
 import { loadGeometry } from "~/flows/geometry-store.server";
 import { factsOfOrder } from "~/flows/order-facts.server";
 import { partListHash } from "~/flows/part-list-hash.server";
@@ -169,10 +170,14 @@ async function shownMoney(order: Order) {
 }
 
 async function shownParcels(order: Order) {
-  return (await listParcels(db, order.id)).map(({ number, weight, handedOverAt, labels }) => ({
+  const parcels = await listParcels(db, order.id);
+  const tracked = order.stage === "shipped" ? await findTracking(parcels) : [];
+  return parcels.map(({ number, weight, handedOverAt, labels }) => ({
     number,
     weight,
     handedOverAt: handedOverAt?.toISOString() ?? null,
     tracking: labels.filter(({ status }) => status === "bought").map((label) => label.trackingNumber),
+    /** As the carrier says it now; null when it does not. */
+    status: tracked.find((one) => one.number === number)?.tracking?.status ?? null,
   }));
 }
