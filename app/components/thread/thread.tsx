@@ -56,16 +56,18 @@ export function Thread({ orderId, audience, pointing = null, onOpenSpot }: Threa
           </div>
         )}
         {data && data.messages.length > 0 ? (
-          <ul role="log" aria-label="Messages" className="divide-y divide-line">
-            {data.messages.map((message) => (
-              <MessageRow
-                key={message.id}
-                message={message}
-                firstNew={message.id === firstNewOf(data, since)}
-                onOpenSpot={onOpenSpot}
-              />
-            ))}
-          </ul>
+          <div role="log" aria-label="Messages">
+            <ul className="divide-y divide-line">
+              {data.messages.map((message) => (
+                <MessageRow
+                  key={message.id}
+                  message={message}
+                  firstNew={message.id === firstNewOf(data, since)}
+                  onOpenSpot={onOpenSpot}
+                />
+              ))}
+            </ul>
+          </div>
         ) : (
           <p className="px-4 py-6 text-small text-soft sm:px-6">
             {data
