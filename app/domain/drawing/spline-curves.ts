@@ -15,6 +15,8 @@ export interface SplineData {
 
 const CLOSED = 1;
 const PERIODIC = 2;
+/** Spans of the domain, as a share of all knots, that are taken for none. */
+const SHORTEST_SPAN = 1e-12;
 
 /** Knots of a clamped spline with even spans. */
 function clampedKnots(degree: number, controls: number): number[] {
@@ -51,8 +53,18 @@ function fromControl(data: SplineData): Spline | null {
   const isPeriodic = (data.flags & (CLOSED | PERIODIC)) !== 0;
   if (isPeriodic && knots.length === control.length + 1 && control.length > degree)
     return unrolled(data, weights);
-  const given = knots.length === 0 ? clampedKnots(degree, control.length) : knots;
+  const given = knots.length === 0 ? clampedKnots(degree, control.length) : withoutSlivers(knots);
   return { kind: "spline", degree, knots: given, control, weights };
+}
+
+/** Knots nearer to the one before than a share of 1e-12 of them all equal it: a span so short has no finite slope. */
+function withoutSlivers(knots: readonly number[]): number[] {
+  const least = SHORTEST_SPAN * Math.abs(knots[knots.length - 1] - knots[0]);
+  let last = knots[0];
+  return knots.map((knot) => {
+    if (knot < last || knot - last > least) last = knot;
+    return last;
+  });
 }
 
 /**

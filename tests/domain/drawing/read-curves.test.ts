@@ -435,6 +435,19 @@ describe("ellipses and splines", () => {
     expect(pointAt(curve, 0.5)).toEqual(near(5, 2.5));
   });
 
+  it("takes a span too short for a slope for none", () => {
+    const hill: [number, number][] = [
+      [0, 0],
+      [20, 15],
+      [40, 0],
+      [60, 15],
+    ];
+    const sliver = readEntities(spline(8, 2, [0, 0, 0, 1e-320, 1, 1, 1], hill));
+    const plain = readEntities(spline(8, 2, [0, 0, 0, 0, 1, 1, 1], hill));
+    expect(totalLength(sliver)).toBeGreaterThan(0);
+    expect(totalLength(sliver)).toBeCloseTo(totalLength(plain), 9);
+  });
+
   it("lists splines that make no curve", () => {
     const bad = [
       spline(

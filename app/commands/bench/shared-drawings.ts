@@ -1,13 +1,9 @@
-/**
- * Reads every drawing beside the project (`../shared/drawings`, never copied into it) and compares lengths,
- * loops, depths and open chains with an independent reader's values (`reference.json` there). Run from the
- * project's root: `npx tsx tests/bench/reading.ts`.
- */
 import { existsSync, readFileSync } from "node:fs";
 import path from "node:path";
 import { readDrawing, scaleDrawing } from "~/domain/drawing";
 import { findParts, type PartsReport } from "~/domain/parts";
 import { LENGTH_UNITS, MM_PER_UNIT } from "~/domain/units";
+import { type BenchRow, row } from "./topic";
 
 interface Reference {
   readonly file: string;
@@ -23,7 +19,6 @@ interface Reference {
 
 interface Compared {
   readonly file: string;
-  readonly seconds: number;
   readonly branches: number;
   /** What differs, by name, ours then theirs. */
   readonly differences: ReadonlyMap<string, readonly [string, string]>;
@@ -31,28 +26,59 @@ interface Compared {
 
 const folder = path.resolve("../shared/drawings");
 
-function main(): void {
+/**
+ * Reads every drawing beside the project (`../shared/drawings`, never copied into it) and compares lengths, loops,
+ * depths and open chains with an independent reader's values (`reference.json` there): how many agree of how many.
+ * Without the folder nothing is compared.
+ */
+export function compareShared(say: (words: string) => void): BenchRow[] {
   const list = path.join(folder, "reference.json");
   if (!existsSync(list)) {
-    console.error("No drawings at ../shared/drawings: nothing to compare with.");
-    return;
+    say("No drawings at ../shared/drawings: nothing to compare with.");
+    return [];
   }
   const references = JSON.parse(readFileSync(list, "utf8")) as Partial<Reference>[];
   const compared: Compared[] = [];
-  const unread: string[] = [];
   let slowest = { file: "", seconds: 0 };
+  let read = 0;
   for (const reference of references) {
     const started = performance.now();
     const outcome = measure(reference);
     const seconds = (performance.now() - started) / 1000;
     if (seconds > slowest.seconds) slowest = { file: reference.file ?? "", seconds };
     if ("reason" in outcome) {
-      unread.push(`${reference.file}: ${outcome.reason}`);
+      say(`Not read: ${reference.file}: ${outcome.reason}`);
       continue;
     }
-    if (isWhole(reference)) compared.push({ ...compare(outcome.report, reference), seconds });
+    read += 1;
+    if (isWhole(reference)) compared.push(compare(outcome.report, reference));
   }
-  print(compared, unread, slowest);
+  for (const { file, branches, differences } of compared) {
+    for (const [name, [ours, theirs]] of differences)
+      say(`${file} (${branches} branches): ${name}: ours ${ours}, theirs ${theirs}`);
+  }
+  say(`The slowest of the shared drawings is ${slowest.file}, ${slowest.seconds.toFixed(2)} s.`);
+  return [row("shared drawings read", "drawings", read, references.length), ...agreement(compared)];
+}
+
+/** How many agree, by what is compared; what branches leave open only where there are none. */
+function agreement(compared: readonly Compared[]): BenchRow[] {
+  const plain = compared.filter(({ branches }) => branches === 0);
+  const agreeing = (name: string, among: readonly Compared[]) =>
+    among.filter(({ differences }) => !differences.has(name)).length;
+  return [
+    ...["length 0.1 %", "length 0.01 %", "unique length 0.01 %"].map((name) =>
+      row(`shared drawings agreeing: ${name}`, "drawings", agreeing(name, compared), compared.length),
+    ),
+    ...["loops", "depths", "open chains"].map((name) =>
+      row(
+        `shared drawings without branches agreeing: ${name}`,
+        "drawings",
+        agreeing(name, plain),
+        plain.length,
+      ),
+    ),
+  ];
 }
 
 const isWhole = (reference: Partial<Reference>): reference is Reference => reference.curves !== undefined;
@@ -70,7 +96,7 @@ function measure({
 const near = (ours: number, theirs: number, share: number): boolean =>
   Math.abs(ours - theirs) <= share * Math.max(Math.abs(theirs), 1e-9);
 
-function compare({ drawn }: PartsReport, reference: Reference): Omit<Compared, "seconds"> {
+function compare({ drawn }: PartsReport, reference: Reference): Compared {
   const differences = new Map<string, readonly [string, string]>();
   const note = (name: string, agrees: boolean, ours: unknown, theirs: unknown) => {
     if (!agrees) differences.set(name, [JSON.stringify(ours), JSON.stringify(theirs)]);
@@ -90,45 +116,3 @@ function compare({ drawn }: PartsReport, reference: Reference): Omit<Compared, "
   note("open chains", drawn.openChains === reference.openChains, drawn.openChains, reference.openChains);
   return { file: reference.file, branches: drawn.branches, differences };
 }
-
-function print(
-  compared: readonly Compared[],
-  unread: readonly string[],
-  slowest: { file: string; seconds: number },
-): void {
-  const share = (name: string, among: readonly Compared[]): string => {
-    const agreeing = among.filter(({ differences }) => !differences.has(name)).length;
-    return `${agreeing} of ${among.length} (${((100 * agreeing) / Math.max(1, among.length)).toFixed(1)} %)`;
-  };
-  const plain = compared.filter(({ branches }) => branches === 0);
-  const lines = [
-    ...["length 0.1 %", "length 0.01 %", "unique length 0.01 %"].map((name) => [
-      name,
-      share(name, compared),
-      "",
-    ]),
-    ...["loops", "depths", "open chains"].map((name) => [
-      name,
-      share(name, compared),
-      `without branches ${share(name, plain)}`,
-    ]),
-  ].map(([name, all, rest]) => `${name.padEnd(22)}${all.padEnd(22)}${rest}`);
-  const disagreements = compared.flatMap(({ file, branches, differences }) =>
-    [...differences].map(
-      ([name, [ours, theirs]]) => `${file} (${branches} branches): ${name}: ours ${ours}, theirs ${theirs}`,
-    ),
-  );
-  const texts = [
-    ...lines,
-    `slowest: ${slowest.file} ${slowest.seconds.toFixed(2)} s`,
-    "",
-    "Not read:",
-    ...unread,
-    "",
-    "Disagreements:",
-    ...disagreements,
-  ];
-  process.stdout.write(`${texts.join("\n")}\n`);
-}
-
-main();
