@@ -9,9 +9,17 @@ export type LotReading = typeof lotReadings.$inferSelect;
 export type LotFields = Pick<Lot, "code" | "supplierLot" | "supplierDocument" | "sheetsOnHand">;
 export type LotThickness = Pick<Lot, "thicknessMin" | "thicknessMean" | "thicknessMax" | "measuredAt">;
 
-/** Every material, retired ones last, by name. */
+/** Every material, retired ones last, by kind and thickness. */
 export async function listAllMaterials(executor: Executor): Promise<Material[]> {
-  return executor.select().from(materials).orderBy(desc(materials.active), asc(materials.code));
+  return executor
+    .select()
+    .from(materials)
+    .orderBy(
+      desc(materials.active),
+      asc(materials.kind),
+      asc(materials.nominalThickness),
+      asc(materials.code),
+    );
 }
 
 export async function findMaterial(executor: Executor, id: string): Promise<Material | undefined> {

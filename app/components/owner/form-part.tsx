@@ -9,7 +9,7 @@ interface FormPartProps {
 /** One part of a long form, named. */
 export function FormPart({ title, note, children }: FormPartProps) {
   return (
-    <fieldset className="min-w-0 border-t border-line py-5 first:border-t-0 first:pt-0">
+    <fieldset className="min-w-0 border-t border-line py-5 first-of-type:border-t-0 first-of-type:pt-0">
       <legend className="float-left mb-3 w-full text-small font-semibold">
         {title}
         {note && <span className="block text-caption font-normal text-soft">{note}</span>}

@@ -47,7 +47,8 @@ const dayShifts = z
       return z.NEVER;
     };
     for (const words of text.split(",").filter((part) => part.trim() !== "")) {
-      const [, from, to] = /^\s*(\d{2}:\d{2})\s*[-–]\s*(\d{2}:\d{2})\s*$/.exec(words) ?? [];
+      const [, from, to] =
+        /^\s*((?:[01]\d|2[0-3]):[0-5]\d)\s*[-–]\s*((?:[01]\d|2[0-3]):[0-5]\d)\s*$/.exec(words) ?? [];
       if (!from || !to) return wrong(`“${words.trim()}” is not a shift: write 08:00-16:30.`);
       if (from >= to) return wrong(`${from}-${to} ends before it begins.`);
       const last = shifts.at(-1);
@@ -58,30 +59,24 @@ const dayShifts = z
   });
 
 /** A machine as it is typed; the week by weekday, Sunday first as the calendar counts. */
-export const machineSchema = z
-  .object({
-    version: z.number().int().optional(),
-    name: z.string().trim().min(1).max(60),
-    bedLength: millimetres,
-    bedWidth: millimetres,
-    rapid: perMinute,
-    acceleration: z.number().positive().max(100_000),
-    toolChangeMinutes: z.number().min(0).max(60),
-    sheetHandlingMinutes: z.number().min(0).max(240),
-    week: z.array(dayShifts).length(7),
-    closed: dayLines,
-  })
-  .transform(({ week, closed, version, ...fields }, context) => {
-    const shifts = week.flatMap((own, weekday) => own.map((shift) => ({ weekday, ...shift })));
-    const calendar = weekCalendarSchema.safeParse({ shifts, closed });
-    if (calendar.success) return { version, fields: { ...fields, calendar: calendar.data } };
-    context.addIssue({
-      code: "custom",
-      path: ["week", 1],
-      message: "A day has 24 hours: write 08:00-16:30.",
-    });
-    return z.NEVER;
-  });
+export const machineSchema = z.object({
+  version: z.number().int().optional(),
+  name: z.string().trim().min(1).max(60),
+  bedLength: millimetres,
+  bedWidth: millimetres,
+  rapid: perMinute,
+  acceleration: z.number().positive().max(100_000),
+  toolChangeMinutes: z.number().min(0).max(60),
+  sheetHandlingMinutes: z.number().min(0).max(240),
+  week: z.array(dayShifts).length(7),
+  closed: dayLines,
+});
+
+/** What is kept of a form that was filled in. */
+export function machineOf({ week, closed, version: _version, ...fields }: z.output<typeof machineSchema>) {
+  const shifts = week.flatMap((own, weekday) => own.map((shift) => ({ weekday, ...shift })));
+  return { ...fields, calendar: weekCalendarSchema.parse({ shifts, closed }) };
+}
 
 /** The week as it is typed, Sunday first. */
 export const weekInWords = ({ shifts }: WeekCalendar): string[] =>

@@ -44,40 +44,48 @@ const STATUS_WORDS = { draft: "draft", published: "in force", superseded: "super
 /** The price book as a document, newer versions to the left of older ones; what a version changed is set heavier. */
 export function PriceDocument({ versions }: { readonly versions: readonly Version[] }) {
   return (
-    <div className="space-y-6">
+    <Table caption="Prices by version">
+      <TableHead>
+        <HeadCell />
+        {versions.map(({ id, number, status }) => (
+          <HeadCell key={id} numeric>
+            {number} {STATUS_WORDS[status]}
+          </HeadCell>
+        ))}
+      </TableHead>
       {sectionsOf(versions).map(({ title, lines }) => (
-        <Table key={title} caption={title} captionShown>
-          <TableHead>
-            <HeadCell />
-            {versions.map(({ id, number, status }) => (
-              <HeadCell key={id} numeric>
-                {number} {STATUS_WORDS[status]}
-              </HeadCell>
-            ))}
-          </TableHead>
-          <tbody>
-            {lines.map(({ label, values }) => (
-              <TableRow key={label}>
-                <RowHead>{label}</RowHead>
-                {values.map((value, place) => {
-                  const before = values[place + 1];
-                  const isChanged = before !== undefined && before !== value;
-                  return (
-                    <Cell key={versions[place]?.id} numeric>
-                      <span
-                        className={isChanged ? "font-semibold text-blue underline underline-offset-4" : ""}
-                      >
-                        {value || "—"}
-                      </span>
-                      {isChanged && <span className="sr-only"> changed</span>}
-                    </Cell>
-                  );
-                })}
-              </TableRow>
-            ))}
-          </tbody>
-        </Table>
+        <tbody key={title}>
+          <tr>
+            <th
+              scope="rowgroup"
+              colSpan={versions.length + 1}
+              className="pt-5 pb-1 text-left text-small font-semibold"
+            >
+              {title}
+            </th>
+          </tr>
+          {lines.map(({ label, values }) => (
+            <TableRow key={label}>
+              <RowHead>{label}</RowHead>
+              {values.map((value, place) => (
+                <Cell key={versions[place]?.id} numeric>
+                  <Value value={value} before={values[place + 1]} />
+                </Cell>
+              ))}
+            </TableRow>
+          ))}
+        </tbody>
       ))}
-    </div>
+    </Table>
+  );
+}
+
+function Value({ value, before }: { readonly value: string; readonly before: string | undefined }) {
+  if (before === undefined || before === value) return value || "—";
+  return (
+    <span className="font-semibold text-blue underline underline-offset-4">
+      {value || "—"}
+      <span className="sr-only">, changed</span>
+    </span>
   );
 }

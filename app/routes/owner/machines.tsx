@@ -9,7 +9,7 @@ import { Size } from "~/components/measure";
 import { Notice } from "~/components/notice";
 import { allErrors } from "~/components/owner/all-errors";
 import { FormPart } from "~/components/owner/form-part";
-import { machineSchema, WEEKDAYS, weekInWords } from "~/components/owner/machine-forms";
+import { machineOf, machineSchema, WEEKDAYS, weekInWords } from "~/components/owner/machine-forms";
 import { NumberRows } from "~/components/owner/number-rows";
 import { RetireForm } from "~/components/owner/retire-form";
 import { WeekStrip } from "~/components/owner/week-strip";
@@ -43,9 +43,13 @@ export async function action(args: Route.ActionArgs) {
   const submission = parseWithZod(sent, { schema: machineSchema });
   if (submission.status !== "success")
     return data({ words: null, result: submission.reply() }, { status: 400 });
-  const { version = 0, fields } = submission.value;
+  const { version = 0 } = submission.value;
   const id = args.url.searchParams.get("change");
-  const saved = await saveMachine({ actor, machine: id === null ? null : { id, version }, fields });
+  const saved = await saveMachine({
+    actor,
+    machine: id === null ? null : { id, version },
+    fields: machineOf(submission.value),
+  });
   if (!saved.ok)
     return data(
       { words: null, result: submission.reply({ formErrors: [saved.words] }) },
