@@ -141,7 +141,7 @@ export function BenchBoard({ bench, mixed }: BenchBoardProps) {
           )}
         </div>
       </Sheet>
-      <ul className="grid gap-3 sm:grid-cols-2 xl:grid-cols-3">
+      <ul className="grid items-start gap-3 sm:grid-cols-2 xl:grid-cols-3">
         {shown.map(({ piece, as }) => (
           <li
             key={piece.id}

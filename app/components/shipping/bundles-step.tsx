@@ -1,6 +1,6 @@
 import { useMemo, useState } from "react";
 import { bySize, parcelNotes, stackPieces } from "~/domain/shipping";
-import { formatKilograms } from "~/domain/units";
+import { formatKilograms, formatLength } from "~/domain/units";
 import type { PackView } from "~/routes/shipping/pack-view.server";
 import { ActForm } from "../act-form";
 import { Button } from "../button";
@@ -8,12 +8,14 @@ import { plainField } from "../field";
 import { Measure, Size } from "../measure";
 import { SelectField } from "../select-field";
 import { Sheet } from "../sheet";
+import { useShownUnit } from "../shown-unit";
 import { ParcelDrawing } from "./parcel-drawing";
 
 type Bundle = readonly string[];
 
 /** Which piece goes into which parcel: as suggested, or moved by hand; sizes and weights follow at once. */
 export function BundlesStep({ order }: { readonly order: PackView }) {
+  const unit = useShownUnit();
   const [bundles, setBundles] = useState<readonly Bundle[]>(order.bundles);
   const flat = useMemo(() => new Map(order.flat.map((piece) => [piece.id, piece])), [order.flat]);
   const names = useMemo(
@@ -44,8 +46,9 @@ export function BundlesStep({ order }: { readonly order: PackView }) {
         </h2>
         <p className="text-caption text-soft">
           A parcel takes <span className="measure">{formatKilograms(order.limits.maxKilograms)}</span>,{" "}
-          <Measure length={order.limits.maxLength} digits={0} /> long,{" "}
-          <Measure length={order.limits.maxLengthPlusGirth} digits={0} /> length and girth together.
+          <span className="measure">{formatLength(order.limits.maxLength, unit)}</span> long,{" "}
+          <span className="measure">{formatLength(order.limits.maxLengthPlusGirth, unit)}</span> length and
+          girth together.
         </p>
       </div>
       <ol className="divide-y divide-line">
@@ -73,8 +76,8 @@ export function BundlesStep({ order }: { readonly order: PackView }) {
               ))}
               <ul className="mt-2 grid gap-x-6 gap-y-1 sm:grid-cols-2">
                 {inside.map(({ id }) => (
-                  <li key={id} className="flex items-center justify-between gap-3">
-                    <span className="measure">{names.get(id)}</span>
+                  <li key={id} className="flex items-center gap-4">
+                    <span className="measure w-28 shrink-0">{names.get(id)}</span>
                     {open && (
                       <span className="w-36">
                         <SelectField

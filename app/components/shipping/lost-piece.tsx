@@ -1,14 +1,13 @@
 import { useState } from "react";
 import { Button } from "../button";
 import { plainField } from "../field";
-import { SelectField } from "../select-field";
 import { PAYERS } from "../shop/order-acts";
 import { TextField } from "../text-field";
 
 export interface LostWords {
   readonly state: "spoiled" | "missing";
   readonly cause: string;
-  readonly payer: string;
+  readonly payer: (typeof PAYERS)[number];
 }
 
 interface LostPieceProps {
@@ -20,6 +19,7 @@ interface LostPieceProps {
 /** What happened to a piece, and who pays for the one that is cut again. */
 export function LostPiece({ name, onMark, onLeave }: LostPieceProps) {
   const [state, setState] = useState<LostWords["state"]>("spoiled");
+  const [payer, setPayer] = useState<LostWords["payer"]>("shop");
   return (
     <form
       aria-label={`${name} is not good`}
@@ -27,7 +27,7 @@ export function LostPiece({ name, onMark, onLeave }: LostPieceProps) {
       onSubmit={(event) => {
         event.preventDefault();
         const form = new FormData(event.currentTarget);
-        onMark({ state, cause: String(form.get("cause")), payer: String(form.get("payer")) });
+        onMark({ state, payer, cause: String(form.get("cause")) });
       }}
     >
       <p>Another one waits for the next nest at once; the builder is told.</p>
@@ -45,7 +45,11 @@ export function LostPiece({ name, onMark, onLeave }: LostPieceProps) {
           </Button>
         ))}
       </div>
+      <p aria-hidden="true" className="!mb-1">
+        What happened
+      </p>
       <TextField
+        labelHidden
         field={plainField("cause", { id: "lost-cause", required: true })}
         label="What happened"
         size="floor"
@@ -53,11 +57,23 @@ export function LostPiece({ name, onMark, onLeave }: LostPieceProps) {
         maxLength={500}
         autoComplete="off"
       />
-      <SelectField
-        field={plainField("payer", { id: "lost-payer", value: "shop", required: true })}
-        label="Who pays"
-        choices={PAYERS.map((payer) => ({ value: payer, label: `the ${payer}` }))}
-      />
+      <fieldset>
+        <legend className="mb-1">Who pays</legend>
+        <div className="grid grid-cols-2 gap-3">
+          {PAYERS.map((one) => (
+            <Button
+              key={one}
+              type="button"
+              size="floor"
+              variant={one === payer ? "chosen" : "plain"}
+              aria-pressed={one === payer}
+              onClick={() => setPayer(one)}
+            >
+              {`the ${one}`}
+            </Button>
+          ))}
+        </div>
+      </fieldset>
       <div className="flex flex-wrap gap-3">
         <Button size="floor" variant="danger">
           Make it again

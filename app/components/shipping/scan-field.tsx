@@ -38,10 +38,16 @@ export function ScanField({ label, hint, onScan, size = "normal" }: ScanFieldPro
         input.value = "";
       }}
     >
+      {size === "floor" && (
+        <p aria-hidden="true" className="mb-1 text-floor">
+          {label}. {hint}
+        </p>
+      )}
       <TextField
         field={plainField("scan", { id: "scan" })}
         label={label}
-        hint={hint}
+        labelHidden={size === "floor"}
+        hint={size === "floor" ? undefined : hint}
         autoComplete="off"
         autoFocus
         size={size}
