@@ -38,9 +38,7 @@ export const isPostOfficeBox = ({ line1, line2 }: Pick<Addressed, "line1" | "lin
  * A shop's own address out of its lines, the last being city, state and ZIP and the one above it the street; null
  * when they are not so.
  */
-export function addressFromLines(
-  lines: readonly string[],
-): {
+export function addressFromLines(lines: readonly string[]): {
   readonly line1: string;
   readonly city: string;
   readonly region: string;
