@@ -1,8 +1,8 @@
 import type { Drawing } from "~/domain/drawing";
-import { checkFit, DEFAULT_LIMITS, type Finding } from "~/domain/fit";
+import { checkFit, type Finding } from "~/domain/fit";
 import type { Point } from "~/domain/geometry";
-import type { Feature, Part, PartsReport } from "~/domain/parts";
-import { formatLength, type LengthUnit } from "~/domain/units";
+import { type Feature, type Part, type PartsReport, unitQuestion } from "~/domain/parts";
+import type { LengthUnit } from "~/domain/units";
 import type { Thickness } from "./inspect-arguments";
 
 /** Stock and tool that findings are checked against where the command line says nothing of them, millimetres. */
@@ -22,7 +22,7 @@ interface Inspected {
 export function inspectionOf({ drawing, report, used, told, thickness }: Inspected) {
   const { drawn, totals } = report;
   return {
-    units: { declared: drawing.declared, used, ...unitsAnswer(drawing, report, told) },
+    units: { declared: drawing.declared, used, ...unitsAnswer(drawing, report, used, told) },
     entities: drawing.entities,
     ignored: drawing.ignored,
     drawn: {
@@ -51,6 +51,7 @@ export function inspectionOf({ drawing, report, used, told, thickness }: Inspect
     })),
     bridges: report.bridges.map(({ layer, gap, at, asked }) => ({ layer, gapMm: gap, asked, at: pair(at) })),
     duplicates: report.duplicates,
+    overlaps: report.overlaps.map(({ layer, length, at }) => ({ layer, lengthMm: length, at: pair(at) })),
     totals: {
       parts: totals.parts,
       distinctParts: totals.distinctParts,
@@ -65,18 +66,19 @@ export function inspectionOf({ drawing, report, used, told, thickness }: Inspect
 
 const pair = ({ x, y }: Point): [number, number] => [x, y];
 
-function unitsAnswer({ declared }: Drawing, { parts }: PartsReport, told: boolean) {
+function unitsAnswer({ declared }: Drawing, report: PartsReport, used: LengthUnit, told: boolean) {
   if (told) return { how: "told", question: null };
-  const longest = parts.reduce((most, { smallestRect }) => Math.max(most, smallestRect.long), 0);
-  const isDoubtful =
-    parts.length > 0 &&
-    (longest < DEFAULT_LIMITS.shortestPlausible || longest > DEFAULT_LIMITS.longestPlausible);
-  const size = `the longest part is ${formatLength(longest, "mm")} / ${formatLength(longest, "in")}`;
-  if (declared === null) {
-    const asked = parts.length > 0 ? `The file names no unit. Read as millimetres ${size}: right?` : null;
-    return { how: "assumed", question: asked ?? "The file names no unit. Is it drawn in millimetres?" };
-  }
-  return { how: "declared", question: isDoubtful ? `As the file declares its unit ${size}: right?` : null };
+  const asked = unitQuestion(report, { declared, used });
+  return {
+    how: declared === null ? "assumed" : "declared",
+    question: asked?.words ?? null,
+    readings: asked?.readings.map(({ unit, longest, smallest, plausible }) => ({
+      unit,
+      longestMm: longest,
+      smallestMm: smallest,
+      plausible,
+    })),
+  };
 }
 
 function partOf(part: Part) {

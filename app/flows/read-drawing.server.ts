@@ -11,7 +11,7 @@ import { queueReading, type ReadingOutcome, readingKey, settleReading } from "~/
 import { storage } from "~/services/clients.server";
 
 /** Raise it with every change that reads some file differently: files are then read anew, and earlier readings kept. */
-export const READER_VERSION = "1";
+export const READER_VERSION = "2";
 
 interface ReadDrawingOptions {
   /** URL of the worker's module, if not the product's own. */

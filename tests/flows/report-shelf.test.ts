@@ -6,6 +6,7 @@ const report = (holes: number): PartsReport => ({
   parts: [],
   open: [],
   bridges: [],
+  overlaps: [],
   setAside: [],
   duplicates: 0,
   drawn: {

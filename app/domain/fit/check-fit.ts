@@ -5,6 +5,7 @@ import type { Finding, FitInput, FitRule, Severity } from "./finding";
 import { DEFAULT_LIMITS } from "./limits";
 import { openOutline } from "./open-outline";
 import { openingNarrowerThanTool } from "./opening-narrower-than-tool";
+import { overlappingLines } from "./overlapping-lines";
 import { partHeldByTabs } from "./part-held-by-tabs";
 import { partLargerThanSheet } from "./part-larger-than-sheet";
 import { partTooSmallToHold } from "./part-too-small-to-hold";
@@ -28,6 +29,7 @@ export const FIT_RULES: Readonly<Record<string, FitRule>> = {
   "part-held-by-tabs": partHeldByTabs,
   "bridged-gap": bridgedGap,
   "doubled-lines": doubledLines,
+  "overlapping-lines": overlappingLines,
 };
 
 const ORDER: Readonly<Record<Severity, number>> = { stop: 0, ask: 1, note: 2 };

@@ -1,3 +1,4 @@
+import { PLAUSIBLE_LENGTH } from "../parts";
 import { INCH_IN_MM } from "../units";
 
 /** Thresholds of the rules, millimetres and square millimetres; every one is the shop's setting. */
@@ -38,8 +39,8 @@ export const DEFAULT_LIMITS: FitLimits = {
   tabbedPartArea: 36 * INCH_IN_MM ** 2,
   tabbedPartWidth: 100,
   toolClearance: 0.01 * INCH_IN_MM,
-  shortestPlausible: 0.5 * INCH_IN_MM,
-  longestPlausible: 20 * 12 * INCH_IN_MM,
+  shortestPlausible: PLAUSIBLE_LENGTH.shortest,
+  longestPlausible: PLAUSIBLE_LENGTH.longest,
   thinFloor: 0.25 * INCH_IN_MM,
   thinnestFloor: 0.1 * INCH_IN_MM,
   thinCupFloor: 3,

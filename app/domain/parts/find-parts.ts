@@ -8,11 +8,12 @@ import { measureDrawn } from "./measure-drawn";
 import { openChainOf } from "./open-chain";
 import { DRILL_SIZES, joiningGroups, type LayerReader, layerReader, THROUGH } from "./operations";
 import type { Outline } from "./outline";
-import { lengthWithoutOverlaps } from "./overlaps";
+import { findOverlaps, lengthWithoutOverlaps } from "./overlaps";
 import type { Bridge, LayerRule, Part, PartsReport } from "./part";
 import { partsOfKinds } from "./parts-of-kinds";
 import { makePieces, type Piece } from "./pieces";
 import { isRestored, type Restored, sortOut } from "./sort-out";
+import { splitOverlaps } from "./split-overlaps";
 import { type Trace, type TraceTolerances, tracePaths } from "./trace";
 
 export interface FindPartsRules {
@@ -69,6 +70,7 @@ export function findParts(drawing: Drawing, rules: FindPartsRules): PartsReport 
     bridges: traced.bridges,
     setAside: aside.list(),
     duplicates: all.duplicates.reduce((count, earlier) => count + (earlier >= 0 ? 1 : 0), 0),
+    overlaps: findOverlaps(pieces.flatMap(throughCuts)),
     drawn: measureDrawn(drawing, withoutAsking(drawing, all, tolerances), extents),
     totals: totalsOf(parts, pieces),
   };
@@ -93,13 +95,10 @@ function traceGroups(
 ): Traced {
   const traced: Traced = { through: [], worked: [], engraved: [], open: [], covered: [], bridges: [] };
   for (const [group, places] of joiningGroups(cut, reader)) {
-    const isWhole = places.length === drawing.paths.length;
-    const trace = isWhole
-      ? all
-      : tracePaths(
-          places.map((i) => cut[i]),
-          tolerances,
-        );
+    const own = places.map((i) => cut[i]);
+    const split = splitOverlaps(own);
+    const isWhole = split === own && places.length === drawing.paths.length;
+    const trace = isWhole ? all : tracePaths(split, tolerances);
     const { joined, outlines, flat } = trace;
     const { open, covered } = partCovered(joined.open, outlines);
     (group === THROUGH ? traced.through : traced.worked).push(...outlines);
@@ -113,6 +112,11 @@ function traceGroups(
 /** The trace with only those gaps closed that need no asking. */
 const withoutAsking = (drawing: Drawing, all: Trace, tolerances: TraceTolerances): Trace =>
   all.joined.bridges.some(({ asked }) => asked) ? tracePaths(drawing.paths, { ...tolerances, ask: 0 }) : all;
+
+const throughCuts = ({ outer, features }: Piece): readonly Pick<Outline, "layer" | "path">[] => [
+  outer,
+  ...features.filter(({ kind }) => kind === "cut-through"),
+];
 
 function totalsOf(parts: readonly Part[], pieces: readonly Piece[]): PartsReport["totals"] {
   const box = pieces.reduce((all, { outer }) => boxUnion(all, outer.box), EMPTY_BOX);

@@ -10,8 +10,10 @@ export type {
   LayerRule,
   OpenChain,
   OperationKind,
+  Overlap,
   Part,
   PartsReport,
   SetAside,
 } from "./part";
 export type { Restored } from "./sort-out";
+export { PLAUSIBLE_LENGTH, type UnitQuestion, type UnitReading, unitQuestion } from "./unit-question";

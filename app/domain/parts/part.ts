@@ -68,6 +68,15 @@ export interface Bridge {
   readonly asked: boolean;
 }
 
+/** Two lines or two arcs that lie on each other for a part of their length, or an edge that neighbours share: cut once. */
+export interface Overlap {
+  readonly layer: string;
+  /** Of what is doubled. */
+  readonly length: number;
+  /** The middle of what is doubled. */
+  readonly at: Point;
+}
+
 export interface SetAside {
   readonly what: "frame" | "text" | "hidden" | "note" | "duplicate";
   readonly layer: string;
@@ -81,6 +90,8 @@ export interface PartsReport {
   readonly bridges: readonly Bridge[];
   readonly setAside: readonly SetAside[];
   readonly duplicates: number;
+  /** Among outlines and openings that are cut. */
+  readonly overlaps: readonly Overlap[];
   readonly drawn: {
     readonly curves: number;
     readonly length: number;

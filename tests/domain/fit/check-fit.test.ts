@@ -74,6 +74,20 @@ describe("doubled lines", () => {
   });
 });
 
+describe("outlines that lie on each other", () => {
+  it("are noted with how much is cut once", () => {
+    const neighbour = drawn(rectangle(600, 100, 500, 200));
+    expect(check([panel, neighbour])).toMatchObject([
+      {
+        code: "overlapping-lines",
+        severity: "note",
+        measured: 200,
+        at: { x: 600, y: expect.closeTo(200, 9) },
+      },
+    ]);
+  });
+});
+
 describe("size", () => {
   it("a part stops only when it goes on the sheet at no angle", () => {
     expect(summary([drawn(rectangle(0, 0, 2420, 1200))])).toEqual([]);
