@@ -11,7 +11,7 @@ import { closePool } from "~/jobs/pool.server";
 import { findOrder } from "~/models/orders.server";
 import { currentSettings, findSettings } from "~/models/settings.server";
 import { afterwards } from "./seed/aftermath";
-import { carryOrder } from "./seed/carry";
+import { carryOrder, type DemoOrder } from "./seed/carry";
 import { demoOrders } from "./seed/orders";
 import { seedPeople } from "./seed/people";
 import { talk } from "./seed/talk";
@@ -26,7 +26,7 @@ async function seed(): Promise<string> {
   const today = dayOf(now, shop.timeZone);
   const plan = demoOrders(people);
   let waiting = 0;
-  for (const { daysAgo, dueIn, aftermath, talk: messages, ...demo } of plan) {
+  for (const { daysAgo, dueIn, late = 0, aftermath, talk: messages, ...demo } of plan) {
     const ahead =
       demo.to === "scheduled" ? plan.filter(({ to }) => to === "scheduled").length - waiting++ : 0;
     const day = workingDayFrom(addDays(today, ahead % 3), lead.holidays);
@@ -34,17 +34,27 @@ async function seed(): Promise<string> {
     const order = await findOrder(db, id, { kind: "staff" });
     if (aftermath && order) await afterwards(order, aftermath, people);
     const due = dueIn === undefined ? null : workingDayFrom(addDays(today, dueIn), lead.holidays);
+    const promisedFor = due === null ? null : instantAt(due, "12:00", shop.timeZone);
     await transact((tx) =>
       shiftOrderTimes(tx, {
         orderId: id,
         days: daysAgo,
-        promisedFor: due === null ? null : instantAt(due, "12:00", shop.timeZone),
+        until: lastMove(demo, promisedFor, late, now),
+        promisedFor,
         now,
       }),
     );
     if (messages) await talk(id, demo.builder, people, messages, now);
   }
   return `Made ${Object.keys(people).length} people and ${plan.length} orders.\n`;
+}
+
+const HOUR_MS = 60 * 60_000;
+
+/** What was shipped left the shop on the morning of its day, or as many days late; everything else moved an hour ago. */
+function lastMove({ to }: DemoOrder, promisedFor: Date | null, late: number, now: Date): Date {
+  if (to !== "shipped" || promisedFor === null) return new Date(now.getTime() - HOUR_MS);
+  return new Date(promisedFor.getTime() + (late * 24 - 2) * HOUR_MS);
 }
 
 const began = Date.now();

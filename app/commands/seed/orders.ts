@@ -9,6 +9,8 @@ export interface SeededOrder extends DemoOrder {
   readonly daysAgo: number;
   /** Days from today; late when negative and not shipped. Without it the quote's own promise stands. */
   readonly dueIn?: number;
+  /** By how many days a shipped order missed its day. */
+  readonly late?: number;
   readonly aftermath?: "hold" | "cancel" | "cancel-late" | "remake" | "refund" | "undo";
   readonly talk?: readonly DemoMessage[];
 }
@@ -54,7 +56,7 @@ export function demoOrders(people: SeededPeople): readonly SeededOrder[] {
     }),
     order(trailer, "bunk-side", "Bunk sides for the first trailer", "shipped", 20, { sets: 2, dueIn: -13 }),
     order(kiosk, "drawer-fronts", "Tea drawer fronts", "shipped", 19, { sanding: "grit-150", dueIn: -15 }),
-    order(chandler, "locker-doors", "Lazarette doors", "shipped", 18, { sets: 2, dueIn: -11 }),
+    order(chandler, "locker-doors", "Lazarette doors", "shipped", 18, { sets: 2, late: 2, dueIn: -11 }),
     order(library, "light-panels", "Light panels, reading nook", "shipped", 16, { dueIn: -9 }),
     order(builder, "fan-panel", "Fan panel, heads compartment", "shipped", 15, { dueIn: -8 }),
     order(trailer, "menu-frame", "Window frame, kitchen", "shipped", 14, { material: "BB-12", dueIn: -7 }),

@@ -18,8 +18,9 @@ const DAY_MS = 24 * 60 * 60_000;
 
 export interface ShiftedTimes {
   readonly orderId: string;
-  /** How long ago the order was made; its moves are spread over the days since. */
+  /** How long ago the order was made; its moves are spread over the time from then until the last of them. */
   readonly days: number;
+  readonly until: Date;
   /** When it is promised for; as far back as everything else when null. */
   readonly promisedFor: Date | null;
   readonly now: Date;
@@ -71,19 +72,19 @@ export async function shiftOrderTimes(tx: Executor, shifted: ShiftedTimes): Prom
   await shiftRuns(tx, orderId, moves.at("cut"));
 }
 
-/** Spreads an order's moves evenly over the days since it was made, in the order they were made. */
+/** Spreads an order's moves evenly over its time, in the order they were made. */
 async function spreadMoves(
   tx: Executor,
-  { orderId, days, now }: ShiftedTimes,
+  { orderId, days, until, now }: ShiftedTimes,
 ): Promise<{ last: Date; at(act: string): Date | null }> {
   const moves = await tx
     .select({ id: stageMoves.id, act: stageMoves.act })
     .from(stageMoves)
     .where(eq(stageMoves.orderId, orderId))
     .orderBy(asc(stageMoves.createdAt), asc(sql`rowid`));
-  const step = (days * DAY_MS) / (moves.length + 1);
-  const times = new Map<string, Date>();
   let last = new Date(now.getTime() - days * DAY_MS);
+  const step = (until.getTime() - last.getTime()) / Math.max(1, moves.length);
+  const times = new Map<string, Date>();
   for (const { id, act } of moves) {
     last = new Date(last.getTime() + step);
     times.set(act, last);
