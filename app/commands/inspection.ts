@@ -52,6 +52,12 @@ export function inspectionOf({ drawing, report, used, told, thickness }: Inspect
     bridges: report.bridges.map(({ layer, gap, at, asked }) => ({ layer, gapMm: gap, asked, at: pair(at) })),
     duplicates: report.duplicates,
     overlaps: report.overlaps.map(({ layer, length, at }) => ({ layer, lengthMm: length, at: pair(at) })),
+    crossings: report.crossings.map(({ at, ...crossing }) => ({ ...crossing, at: pair(at) })),
+    nearEqual: report.nearEqual.map(({ one, other, difference }) => ({
+      one,
+      other,
+      differenceMm: difference,
+    })),
     totals: {
       parts: totals.parts,
       distinctParts: totals.distinctParts,

@@ -7,6 +7,8 @@ const report = (holes: number): PartsReport => ({
   open: [],
   bridges: [],
   overlaps: [],
+  crossings: [],
+  nearEqual: [],
   setAside: [],
   duplicates: 0,
   drawn: {

@@ -1,8 +1,11 @@
 import { formatLength, formatMillimetres, type ShownUnit } from "../units";
 import { bridgedGap } from "./bridged-gap";
+import { copiesTimesQuantity } from "./copies-times-quantity";
+import { crossingOutlines } from "./crossing-outlines";
 import { doubledLines } from "./doubled-lines";
 import type { Finding, FitInput, FitRule, Severity } from "./finding";
 import { DEFAULT_LIMITS } from "./limits";
+import { nearEqualParts } from "./near-equal-parts";
 import { openOutline } from "./open-outline";
 import { openingNarrowerThanTool } from "./opening-narrower-than-tool";
 import { overlappingLines } from "./overlapping-lines";
@@ -18,6 +21,7 @@ import { unitImplausible } from "./unit-implausible";
 /** All rules by the code of what they find. */
 export const FIT_RULES: Readonly<Record<string, FitRule>> = {
   "open-outline": openOutline,
+  "crossing-outlines": crossingOutlines,
   "unit-implausible": unitImplausible,
   "possible-frame": possibleFrame,
   "part-larger-than-sheet": partLargerThanSheet,
@@ -29,6 +33,8 @@ export const FIT_RULES: Readonly<Record<string, FitRule>> = {
   "part-held-by-tabs": partHeldByTabs,
   "bridged-gap": bridgedGap,
   "doubled-lines": doubledLines,
+  "copies-times-quantity": copiesTimesQuantity,
+  "near-equal-parts": nearEqualParts,
   "overlapping-lines": overlappingLines,
 };
 

@@ -36,6 +36,8 @@ export interface FitInput {
   readonly stock: FitStock;
   /** Of the mills that cut outlines and openings; drills are another matter. */
   readonly tools: { readonly smallestDiameter: number };
+  /** How many times all that is drawn is ordered; once where not given. */
+  readonly sets?: number;
   /** Thresholds that differ from the defaults. */
   readonly limits?: Partial<FitLimits>;
   /** What lengths are written in; millimetres where not given. */

@@ -61,7 +61,7 @@ function firstMatch<T>(
 }
 
 /** Whether measures that turning does not change leave it possible that two shapes are equal. */
-function mayEqual(one: Shape, other: Shape, tolerance: number): boolean {
+export function mayEqual(one: Shape, other: Shape, tolerance: number): boolean {
   const corners = Math.max(one.outer.chords.points.length, other.outer.chords.points.length);
   const lengthSlack = Math.min(0.02 * one.length, 2 * tolerance * Math.min(corners, 40)) + tolerance * 7;
   return (

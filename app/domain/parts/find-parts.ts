@@ -1,10 +1,11 @@
 import type { Drawing, DrawnPath } from "../drawing";
 import { boxExtent, boxHeight, boxUnion, boxWidth, EMPTY_BOX, pathBox } from "../geometry";
-import { groupCongruent } from "./congruence";
+import { groupCongruent, type Kind } from "./congruence";
 import { partCovered } from "./covered-lines";
 import type { Chain } from "./joining";
 import { bareUnitOf } from "./layer-names";
 import { measureDrawn } from "./measure-drawn";
+import { findNearKinds } from "./near-equal";
 import { openChainOf } from "./open-chain";
 import { DRILL_SIZES, joiningGroups, type LayerReader, layerReader, THROUGH } from "./operations";
 import type { Outline } from "./outline";
@@ -12,6 +13,7 @@ import { findOverlaps, lengthWithoutOverlaps } from "./overlaps";
 import type { Bridge, LayerRule, Part, PartsReport } from "./part";
 import { partsOfKinds } from "./parts-of-kinds";
 import { makePieces, type Piece } from "./pieces";
+import { findCrossings } from "./segment-crossings";
 import { isRestored, type Restored, sortOut } from "./sort-out";
 import { splitOverlaps } from "./split-overlaps";
 import { type Trace, type TraceTolerances, tracePaths } from "./trace";
@@ -28,9 +30,19 @@ export interface FindPartsRules {
   readonly drillSizes?: readonly number[];
   /** How much equal parts may differ, millimetres. */
   readonly equalTolerance?: number;
+  /** Parts that differ by less are pointed out, millimetres. */
+  readonly nearTolerance?: number;
 }
 
-const DEFAULTS = { bridgeTolerance: 0.2, askTolerance: 0.5, equalTolerance: 0.05, drillSizes: DRILL_SIZES };
+const DEFAULTS = {
+  bridgeTolerance: 0.2,
+  askTolerance: 0.5,
+  equalTolerance: 0.05,
+  nearTolerance: 0.5,
+  drillSizes: DRILL_SIZES,
+};
+/** Crossings listed at most: a drawing with more is drawn so throughout. */
+const MOST_CROSSINGS = 20;
 /** Shares of the drawing's extent within which curves are the same, and ends one node. */
 const SAME_CURVE = 1e-6;
 const SAME_NODE = 1e-7;
@@ -63,7 +75,9 @@ export function findParts(drawing: Drawing, rules: FindPartsRules): PartsReport 
   for (const frame of frames) aside.add("frame", frame);
   for (const chain of traced.covered) aside.add("duplicate", chain);
 
-  const parts = partsOfKinds(groupCongruent(pieces, settings.equalTolerance), drawing.texts);
+  const kinds = groupCongruent(pieces, settings.equalTolerance);
+  const parts = partsOfKinds(kinds, drawing.texts);
+  const framed = new Set(frames);
   return {
     parts,
     open: [...traced.open, ...strays].map(openChainOf),
@@ -71,6 +85,8 @@ export function findParts(drawing: Drawing, rules: FindPartsRules): PartsReport 
     setAside: aside.list(),
     duplicates: all.duplicates.reduce((count, earlier) => count + (earlier >= 0 ? 1 : 0), 0),
     overlaps: findOverlaps(pieces.flatMap(throughCuts)),
+    crossings: crossingsOf(traced.through.filter((outline) => !framed.has(outline))),
+    nearEqual: nearEqualOf(kinds, parts, settings),
     drawn: measureDrawn(drawing, withoutAsking(drawing, all, tolerances), extents),
     totals: totalsOf(parts, pieces),
   };
@@ -112,6 +128,26 @@ function traceGroups(
 /** The trace with only those gaps closed that need no asking. */
 const withoutAsking = (drawing: Drawing, all: Trace, tolerances: TraceTolerances): Trace =>
   all.joined.bridges.some(({ asked }) => asked) ? tracePaths(drawing.paths, { ...tolerances, ask: 0 }) : all;
+
+const crossingsOf = (outlines: readonly Outline[]): PartsReport["crossings"] =>
+  findCrossings(outlines, MOST_CROSSINGS).map(({ one, other, at }) => ({
+    layer: outlines[one].layer,
+    at,
+    itself: one === other,
+  }));
+
+function nearEqualOf(
+  kinds: readonly Kind[],
+  parts: readonly Part[],
+  { equalTolerance, nearTolerance }: typeof DEFAULTS,
+): PartsReport["nearEqual"] {
+  const placeOf = new Map(parts.map(({ outer }, place) => [outer, place]));
+  return findNearKinds(kinds, equalTolerance, nearTolerance).flatMap(({ one, other, difference }) => {
+    const places = [one, other].flatMap((kind) => placeOf.get(kinds[kind].first.outer.path) ?? []);
+    const [first, second] = places.sort((p, q) => p - q).map((place) => parts[place].id);
+    return [{ one: first, other: second, difference }];
+  });
+}
 
 const throughCuts = ({ outer, features }: Piece): readonly Pick<Outline, "layer" | "path">[] => [
   outer,

@@ -5,9 +5,11 @@ export { DRILL_SIZES } from "./operations";
 export type {
   Bridge,
   Copy,
+  Crossing,
   Depth,
   Feature,
   LayerRule,
+  NearEqual,
   OpenChain,
   OperationKind,
   Overlap,
@@ -15,5 +17,13 @@ export type {
   PartsReport,
   SetAside,
 } from "./part";
+export {
+  type ChangedPart,
+  compareRevisions,
+  keepLetters,
+  type PairedPart,
+  type RevisionComparison,
+} from "./revisions";
+export type { ShapeDifference } from "./shape-difference";
 export type { Restored } from "./sort-out";
 export { PLAUSIBLE_LENGTH, type UnitQuestion, type UnitReading, unitQuestion } from "./unit-question";

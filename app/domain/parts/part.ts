@@ -77,6 +77,20 @@ export interface Overlap {
   readonly at: Point;
 }
 
+/** A place where an outline crosses itself or another one; one place for each pair. */
+export interface Crossing {
+  readonly layer: string;
+  readonly at: Point;
+  readonly itself: boolean;
+}
+
+/** Two parts, by id, that are equal but for a difference under half a millimetre. */
+export interface NearEqual {
+  readonly one: string;
+  readonly other: string;
+  readonly difference: number;
+}
+
 export interface SetAside {
   readonly what: "frame" | "text" | "hidden" | "note" | "duplicate";
   readonly layer: string;
@@ -92,6 +106,8 @@ export interface PartsReport {
   readonly duplicates: number;
   /** Among outlines and openings that are cut. */
   readonly overlaps: readonly Overlap[];
+  readonly crossings: readonly Crossing[];
+  readonly nearEqual: readonly NearEqual[];
   readonly drawn: {
     readonly curves: number;
     readonly length: number;

@@ -52,7 +52,13 @@ export interface Shape {
   readonly signature: string;
 }
 
-export function shapeOf(piece: Piece): Shape {
+/** What a shape is made of: a piece as drawn, or a part again. */
+export interface Shaped {
+  readonly outer: Pick<Piece["outer"], "path" | "area" | "length">;
+  readonly features: readonly Feature[];
+}
+
+export function shapeOf(piece: Shaped): Shape {
   const outer = ringOf(piece.outer.path, true);
   const features = piece.features.map((feature) => ({ ...ringOf(feature.path, false), key: keyOf(feature) }));
   const reach =

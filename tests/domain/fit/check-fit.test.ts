@@ -88,6 +88,50 @@ describe("outlines that lie on each other", () => {
   });
 });
 
+describe("outlines that cross", () => {
+  it("are asked with the place, those that only touch are not", () => {
+    const askew = drawn(rectangle(500, 300, 400, 300));
+    expect(check([panel, askew])).toMatchObject([{ code: "crossing-outlines", severity: "ask" }]);
+    const bow = drawn(
+      ring([
+        [0, 0],
+        [600, 400],
+        [600, 0],
+        [0, 300],
+      ]),
+    );
+    const [crossing] = check([bow]);
+    // y = 2x/3 meets y = 300 - x/2 at x = 1800/7.
+    expect(crossing).toMatchObject({ code: "crossing-outlines", severity: "ask" });
+    expect(crossing.at?.x).toBeCloseTo(1800 / 7, 9);
+    expect(crossing.at?.y).toBeCloseTo(1200 / 7, 9);
+    const inner = drawn(hole(300, 200, 400));
+    expect(summary([panel, inner])).toEqual([]);
+  });
+});
+
+describe("parts that are nearly equal", () => {
+  it("are pointed out with their difference, larger ones and mirrored twins are not", () => {
+    const near = check([panel, drawn(rectangle(1000, 0, 600.3, 400))]);
+    expect(near).toMatchObject([{ code: "near-equal-parts", severity: "note", part: "B" }]);
+    // Laid middle on middle each end stands out by half of 0.3 mm.
+    expect(near[0].measured).toBeGreaterThan(0.13);
+    expect(near[0].measured).toBeLessThanOrEqual(0.3);
+    expect(summary([panel, drawn(rectangle(1000, 0, 602, 400))])).toEqual([]);
+  });
+});
+
+describe("copies and sets", () => {
+  it("are asked where both multiply", () => {
+    const twice = [panel, drawn(rectangle(1000, 0, 600, 400))];
+    expect(check(twice, { sets: 3 })).toMatchObject([
+      { code: "copies-times-quantity", severity: "ask", measured: 6 },
+    ]);
+    expect(summary(twice)).toEqual([]);
+    expect(summary([panel], { sets: 3 })).toEqual([]);
+  });
+});
+
 describe("size", () => {
   it("a part stops only when it goes on the sheet at no angle", () => {
     expect(summary([drawn(rectangle(0, 0, 2420, 1200))])).toEqual([]);
