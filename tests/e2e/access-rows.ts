@@ -86,7 +86,7 @@ export const ROWS: readonly AccessRow[] = [
   { route: "/shop/bench", get: staff(200), post: NO_ACT },
   { route: "/shop/bench/orders/:orderId", get: staff(200), post: NO_ACT },
   { route: "/shop/bench/sheets/:sheetId", get: staff(200), post: NO_ACT },
-  { route: "/shop/bench/acts", get: everybody(400), post: floor(400), body: { json: { kind: "none" } } },
+  { route: "/shop/bench/acts", get: staff(400), post: floor(400), body: { json: { kind: "none" } } },
   { route: "/shop/orders/:orderId/labels.pdf", get: staff(200), post: NOT_TAKEN },
   { route: "/shop/sheets/:sheetId/labels.pdf", get: staff(200), post: NOT_TAKEN },
 

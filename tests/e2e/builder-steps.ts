@@ -59,7 +59,7 @@ export async function shownTotal(page: Page): Promise<number> {
 
 /** Fills the pay page's card and presses its button. */
 export async function payByCard(page: Page, number: string): Promise<void> {
-  await page.waitForURL(/\/pay\//);
+  await page.waitForURL(/\/pay\//, { waitUntil: "commit" });
   await page.getByLabel("Card number").fill(number);
   await page.getByLabel("Expiry (MM/YY)").fill("12/34");
   await page.getByLabel("CVC").fill("123");

@@ -187,15 +187,13 @@ describe("tools and machines", () => {
         estimatedMinutes: 20,
       })
       .returning();
-    await db
-      .insert(runs)
-      .values({
-        sheetId: sheet?.id ?? "",
-        machineId: id,
-        day: "2026-12-05",
-        sequence: 1,
-        plannedMinutes: 20,
-      });
+    await db.insert(runs).values({
+      sheetId: sheet?.id ?? "",
+      machineId: id,
+      day: "2026-12-05",
+      sequence: 1,
+      plannedMinutes: 20,
+    });
     const away = { actor, kind: "machine", id, version: 2, active: false } as const;
     expect((await refused(retire(away))).words).toContain("has a sheet on its days");
     await db.update(runs).set({ finishedAt: new Date(), actualMinutes: 22 });

@@ -1,5 +1,5 @@
+import { useQuery } from "@tanstack/react-query";
 import { useRef, useState } from "react";
-import { useRevalidator } from "react-router";
 import type { BenchPiece, BenchView } from "~/routes/shop/bench-view.server";
 import { Button } from "../button";
 import { Notice } from "../notice";
@@ -27,15 +27,34 @@ function shownAs(piece: BenchPiece, waiting: readonly BenchSend[]): Shown {
   return piece.stage === "cut" ? "waits" : "not-here";
 }
 
+type BenchOf = { readonly orderId: string } | { readonly sheetId: string };
+
 interface BenchBoardProps {
+  readonly of: BenchOf;
+  /** As the page was loaded. */
   readonly bench: BenchView;
   /** Several orders lie here: each piece says whose it is. */
   readonly mixed: boolean;
 }
 
+/** The pieces as they stand. Without a line what was known stays, and is asked for again when there is one. */
+function useBench(of: BenchOf, loaded: BenchView) {
+  return useQuery({
+    queryKey: ["bench", of],
+    queryFn: async (): Promise<BenchView> => {
+      const answer = await fetch(`/shop/bench/acts?${new URLSearchParams({ ...of })}`);
+      if (!answer.ok) throw new Error(`The bench answered ${answer.status}.`);
+      return answer.json();
+    },
+    initialData: loaded,
+    staleTime: Number.POSITIVE_INFINITY,
+    gcTime: 0,
+  });
+}
+
 /** The tabs-off bench: "all good, except ...", or piece by piece with a scanner or a finger. */
-export function BenchBoard({ bench, mixed }: BenchBoardProps) {
-  const revalidator = useRevalidator();
+export function BenchBoard({ of, bench: loaded, mixed }: BenchBoardProps) {
+  const { data: bench, refetch } = useBench(of, loaded);
   const [said, setSaid] = useState<string | null>(null);
   const [marking, setMarking] = useState<BenchPiece | null>(null);
   const [lastGood, setLastGood] = useState<{ readonly id: string; readonly words: string } | null>(null);
@@ -45,12 +64,12 @@ export function BenchBoard({ bench, mixed }: BenchBoardProps) {
       if (act.kind === "good")
         setLastGood({ id: act.requestId, words: names.current.get(act.requestId) ?? "the last ones" });
       if (act.kind === "undo") setLastGood(null);
-      void revalidator.revalidate();
+      void refetch();
     },
     refused: (act, words) => {
       setSaid(`${names.current.get(act.requestId) ?? "An act"}: ${words}`);
       if (act.kind === "undo") setLastGood(null);
-      void revalidator.revalidate();
+      void refetch();
     },
   });
   const shown = bench.pieces.map((piece) => ({ piece, as: shownAs(piece, queue.waiting) }));

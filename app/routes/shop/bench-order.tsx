@@ -34,7 +34,7 @@ export default function BenchOrder({ loaderData: order }: Route.ComponentProps) 
         title={order.name}
         right={<LabelsLinks to={`/shop/orders/${order.id}/labels.pdf`} />}
       />
-      <BenchBoard bench={order.bench} mixed={false} />
+      <BenchBoard of={{ orderId: order.id }} bench={order.bench} mixed={false} />
     </>
   );
 }

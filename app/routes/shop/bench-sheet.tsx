@@ -40,7 +40,7 @@ export default function BenchSheet({ loaderData: sheet }: Route.ComponentProps) 
         title={sheet.name}
         right={<LabelsLinks to={`/shop/sheets/${sheet.id}/labels.pdf`} />}
       />
-      <BenchBoard bench={sheet.bench} mixed={mixed} />
+      <BenchBoard of={{ sheetId: sheet.id }} bench={sheet.bench} mixed={mixed} />
     </>
   );
 }
