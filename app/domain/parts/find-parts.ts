@@ -101,6 +101,11 @@ interface Traced {
   readonly bridges: Bridge[];
 }
 
+/** Without spreading: a large drawing has more outlines than a call may have arguments. */
+function addAll<T>(list: T[], more: readonly T[]): void {
+  for (const one of more) list.push(one);
+}
+
 /** Outlines and lines of what is to be cut, joined within groups of layers that belong together. */
 function traceGroups(
   drawing: Drawing,
@@ -117,10 +122,12 @@ function traceGroups(
     const trace = isWhole ? all : tracePaths(split, tolerances);
     const { joined, outlines, flat } = trace;
     const { open, covered } = partCovered(joined.open, outlines);
-    (group === THROUGH ? traced.through : traced.worked).push(...outlines);
-    (group.startsWith("engrave") ? traced.engraved : traced.open).push(...open, ...flat);
-    traced.covered.push(...covered);
-    traced.bridges.push(...joined.bridges);
+    addAll(group === THROUGH ? traced.through : traced.worked, outlines);
+    const lines = group.startsWith("engrave") ? traced.engraved : traced.open;
+    addAll(lines, open);
+    addAll(lines, flat);
+    addAll(traced.covered, covered);
+    addAll(traced.bridges, joined.bridges);
   }
   return traced;
 }
