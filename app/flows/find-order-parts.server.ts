@@ -16,7 +16,7 @@ import { orderInterpretation } from "./order-interpretation.server";
 import { createReportShelf } from "./report-shelf";
 
 /** Raise it with every change that finds other parts in some drawing: reports are then made anew. */
-const FINDER_VERSION = "2";
+const FINDER_VERSION = "3";
 
 /** A file of an order as far as it is read. */
 export type FileParts = { readonly drawingId: string; readonly sha256: string; readonly fileName: string } & (
