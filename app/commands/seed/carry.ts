@@ -113,6 +113,10 @@ async function orderOf(orderId: string): Promise<Order> {
 }
 const versionOf = async (orderId: string): Promise<number> => (await orderOf(orderId)).version;
 
+/** The number after KP-. */
+const numberOf = async (orderId: string): Promise<number> =>
+  Number((await orderOf(orderId)).reference.replace(/\D/g, ""));
+
 async function upload({ builder, drawing, name, trial }: DemoOrder): Promise<string> {
   const { fileName, draw } = DEMO_DRAWINGS[drawing];
   const { orderId } = must(
@@ -234,7 +238,7 @@ async function sheetsOf(orderId: string): Promise<{ id: string; minutes: number 
 async function schedule(orderId: string, shop: Shop): Promise<void> {
   const machines = (await listMachines(db)).filter(({ active }) => active);
   /* Two orders in three go to the first machine. */
-  const turn = Number((await orderOf(orderId)).reference.replace(/\D/g, "")) % 3 === 0 ? 1 : 0;
+  const turn = (await numberOf(orderId)) % 3 === 0 ? 1 : 0;
   for (const [index, sheet] of (await sheetsOf(orderId)).entries()) {
     const machine = machines[(turn + index) % machines.length];
     if (!machine) throw new Error("The shop has no machine.");
@@ -252,13 +256,14 @@ async function schedule(orderId: string, shop: Shop): Promise<void> {
 }
 
 async function cut(orderId: string, shop: Shop): Promise<void> {
+  const turn = await numberOf(orderId);
   for (const [index, sheet] of (await sheetsOf(orderId)).entries()) {
     const run = await findRunOfSheet(db, sheet.id);
     if (!run) throw new Error("The sheet has no run.");
     must(await startRun({ actor: shop.operator, runId: run.id, version: run.version }));
     const started = await findRunOfSheet(db, sheet.id);
     /* Some sheets take longer than planned, some less. */
-    const share = 0.92 + ((index * 7 + 3) % 5) * 0.06;
+    const share = 0.9 + ((turn * 7 + index * 4) % 9) * 0.03;
     must(
       await finishRun({
         actor: shop.operator,
