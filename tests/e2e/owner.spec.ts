@@ -94,6 +94,8 @@ test("a machine's week is changed, and a shift that overlaps is refused in words
   await signIn(page, url, "owner");
   await go(page, "/owner/machines");
   await page.getByRole("link", { name: "North" }).click();
+  // The same fields stand empty for another machine until North's are there.
+  await expect(page.getByRole("textbox", { name: "Name", exact: true })).toHaveValue("North");
   const saturday = page.getByRole("textbox", { name: "Saturday" });
   await saturday.fill("08:00-12:00, 11:00-13:00");
   await page.getByRole("button", { name: "Save" }).click();
